@@ -1,0 +1,1 @@
+"""Measurements and generators that are kept but not shipped."""

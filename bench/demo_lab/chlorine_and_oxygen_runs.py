@@ -1,0 +1,130 @@
+"""True values of the chlorine chamber and of the oxygen plasmas, invented."""
+
+from __future__ import annotations
+
+from datetime import date
+
+from bench.demo_lab.plan import Event, FilmRuns, RecipeRuns
+
+CHLORINE_AND_OXYGEN_RUNS: tuple[RecipeRuns, ...] = (
+    # Positive induction in plasma: the native oxide is sputtered through first.
+    RecipeRuns(
+        etch="aluminium-rie",
+        prefix="AR",
+        first=date(2026, 3, 30),
+        every_days=18,
+        count=12,
+        spread=0.06,
+        temperature_degc=40.0,
+        temperature_sd=0.5,
+        load_cm2=78.5,
+        chamber=True,
+        events={3: Event("repair")},
+        films=(
+            FilmRuns("al-cu", 420, 700, (75,), 4, (0, 1, 3, 4, 6, 7, 9, 10), induction_s=11),
+            FilmRuns("al-cu", 420, 700, (30, 50, 70, 90), 4, (2, 5, 8, 11), induction_s=11),
+            FilmRuns("resist-positive-a", 205, 1390, (75,), 3, (0, 1, 3, 4, 6, 7, 9, 10), prior="hard-baked"),
+            FilmRuns("sio2-thermal-wet", 44, 500, (120,), 0.8, (3, 5, 8, 10), own_wafer=True),
+            FilmRuns("ti", 62, 150, (60,), 1.5, (4, 9), own_wafer=True),
+        ),
+    ),
+    RecipeRuns(
+        etch="poly-rie-chlorine",
+        prefix="PC",
+        first=date(2026, 4, 27),
+        every_days=20,
+        count=10,
+        spread=0.04,
+        temperature_degc=20.0,
+        load_cm2=78.5,
+        chamber=True,
+        films=(
+            FilmRuns("poly-si-n", 260, 450, (75,), 1.5),
+            FilmRuns("resist-positive-a", 88, 1390, (75,), 3, prior="hard-baked"),
+            FilmRuns("sio2-thermal-dry", 4.4, 100, (240,), 0.25, (0, 2, 4, 6, 8), own_wafer=True),
+            FilmRuns("poly-si-undoped", 215, 450, (75,), 1.5, (1, 5), own_wafer=True),
+        ),
+    ),
+    RecipeRuns(
+        etch="chromium-rie",
+        prefix="CR",
+        first=date(2026, 7, 13),
+        every_days=30,
+        count=4,
+        spread=0.07,
+        temperature_degc=20.0,
+        load_cm2=20,
+        chamber=True,
+        films=(
+            FilmRuns("cr", 27, 150, (180,), 0.8),
+            FilmRuns("resist-positive-a", 62, 1390, (180,), 3, prior="hard-baked"),
+        ),
+    ),
+    RecipeRuns(
+        etch="resist-ash",
+        prefix="RA",
+        first=date(2026, 3, 3),
+        every_days=26,
+        count=10,
+        spread=0.08,
+        temperature_degc=60,
+        temperature_sd=3,
+        load_cm2=78.5,
+        chamber=True,
+        events={2: Event("clean")},
+        films=(
+            FilmRuns("resist-positive-a", 330, 1400, (150,), 4),
+            FilmRuns("resist-thick-q", 300, 8000, (600,), 25, (3, 7), own_wafer=True),
+            FilmRuns("sio2-thermal-wet", 0, 300, (1800,), 0.3, (2, 4, 8), own_wafer=True),
+            FilmRuns("si-100", 0, 1000, (1800,), 0.6, (3, 6), own_wafer=True, note="step height"),
+            FilmRuns("sin-lpcvd", 0, 150, (1800,), 0.3, (5, 9), own_wafer=True),
+            FilmRuns("al-cu", 0, 600, (1800,), 1.2, (4, 7), own_wafer=True),
+            FilmRuns("au", 0, 210, (1800,), 1.5, (6,), own_wafer=True),
+        ),
+    ),
+    RecipeRuns(
+        etch="resist-descum",
+        prefix="RD",
+        first=date(2026, 6, 8),
+        every_days=30,
+        count=6,
+        spread=0.1,
+        temperature_degc=25,
+        temperature_sd=2,
+        load_cm2=78.5,
+        chamber=True,
+        films=(FilmRuns("resist-positive-a", 33, 1400, (120,), 3),),
+    ),
+    RecipeRuns(
+        etch="parylene-oxygen",
+        prefix="PX",
+        first=date(2026, 5, 18),
+        every_days=36,
+        count=5,
+        spread=0.07,
+        temperature_degc=20.0,
+        load_cm2=20,
+        chamber=True,
+        films=(
+            FilmRuns("parylene-c", 215, 5000, (900,), 20),
+            FilmRuns("al-cu", 0, 100, (900,), 0.8),
+            FilmRuns("au", 0, 210, (900,), 1.5, (1, 3), own_wafer=True),
+        ),
+    ),
+    # Stale since mid 2025.
+    RecipeRuns(
+        etch="polyimide-oxygen",
+        prefix="PO",
+        first=date(2024, 11, 11),
+        every_days=50,
+        count=5,
+        spread=0.08,
+        temperature_degc=20.0,
+        load_cm2=20,
+        chamber=True,
+        films=(
+            FilmRuns("polyimide", 340, 5000, (600,), 20),
+            FilmRuns("al-cu", 0, 100, (600,), 0.8),
+        ),
+    ),
+)

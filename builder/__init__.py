@@ -1,0 +1,1 @@
+"""Etchwright: a site and a planner from a lab's etch records."""

@@ -1,0 +1,1 @@
+"""Views to finished, autoescaped HTML pages with relative links; ignorant of any host."""

@@ -1,0 +1,25 @@
+"""Formulas in the hand-written pages, LaTeX to MathML, which browsers draw without a script."""
+
+from __future__ import annotations
+
+import re
+
+_BLOCK = re.compile(r"\$\$(.+?)\$\$", re.DOTALL)
+_INLINE = re.compile(r"\$([^$\n]+)\$")
+
+
+def with_formulas(markdown: str) -> str:
+    """Return the Markdown with `$$ ... $$` as a block of MathML and `$ ... $` within the line."""
+    if "$" not in markdown:
+        return markdown
+    # Imported here: only pages with formulas pay for it.
+    from latex2mathml.converter import convert  # noqa: PLC0415
+
+    def block(match: re.Match[str]) -> str:
+        mathml = convert(match[1].strip(), display="block")
+        return f'<div class="ew-formula" tabindex="0" role="region" aria-label="formula">{mathml}</div>'
+
+    def inline(match: re.Match[str]) -> str:
+        return convert(match[1].strip())
+
+    return _INLINE.sub(inline, _BLOCK.sub(block, markdown))

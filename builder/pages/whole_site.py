@@ -1,0 +1,51 @@
+"""All pages of a lab: which view goes through which template."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from datetime import date
+
+from builder.pages.page import FinishedSite, Page
+from builder.pages.render import render_page
+from builder.records.lab import LabRecords
+from builder.views.bibliography import bibliography_page
+from builder.views.chemical_page import chemical_page
+from builder.views.etchant_page import etchant_page
+from builder.views.film_page import film_page
+from builder.views.home_page import home_page
+from builder.views.recipe_page import recipe_page
+from builder.views.record_lists import chemical_list, etchant_list, film_list, recipe_list, tool_list
+from builder.views.tool_page import tool_page
+
+INVENTED_NOTICE = (
+    "Demonstration lab: its recipes, runs and samples are invented and measured nowhere. Do not etch by them."
+)
+
+
+def finished_site(records: LabRecords, today: date) -> FinishedSite:
+    """Return all pages of a lab as of a day, in the order of their addresses."""
+    pages = sorted(_pages(records, today), key=lambda page: page.url)
+    return FinishedSite(
+        lab_name=records.settings.name,
+        notice=INVENTED_NOTICE if records.settings.invented else "",
+        as_of=today.isoformat(),
+        pages=tuple(pages),
+    )
+
+
+def _pages(records: LabRecords, today: date) -> Iterator[Page]:
+    yield render_page("home", home_page(records, today))
+    yield render_page("recipe_list", recipe_list(records))
+    for view in (film_list, etchant_list, chemical_list, tool_list):
+        yield render_page("record_list", view(records))
+    yield render_page("bibliography", bibliography_page(records))
+    for etch in records.etches.values():
+        yield render_page("recipe", recipe_page(records, etch))
+    for film in records.films.values():
+        yield render_page("film", film_page(records, film))
+    for etchant in records.etchants.values():
+        yield render_page("etchant", etchant_page(records, etchant))
+    for chemical in records.chemicals.values():
+        yield render_page("chemical", chemical_page(records, chemical))
+    for tool in records.tools.values():
+        yield render_page("tool", tool_page(records, tool))

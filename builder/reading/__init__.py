@@ -1,0 +1,1 @@
+"""Files to plain data with line numbers: strict YAML, strict CSV, and the folders of a lab."""

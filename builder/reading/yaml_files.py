@@ -1,0 +1,224 @@
+"""
+Strict YAML: JSON-like data only, with the place of every value and all faults at once.
+
+A loader of our own over PyYAML's events, because the stock loader reads `NO` as false, `12:30` as
+750 and `010` as 8, leaves `1e-3` as text, and keeps the last of two equal keys without a word.
+"""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Iterator
+from pathlib import Path
+from typing import cast
+
+import yaml
+
+from builder.problems import Problem, Severity
+from builder.reading.raw import JsonValue, Place, Positions, Raw, join_pointer
+from builder.reading.scalars import ScalarFault, plain_scalar
+from builder.reading.text_files import read_text
+
+MAX_DEPTH = 64
+"""Deepest nesting read; records nest about six deep."""
+
+_FAST_LOADER = getattr(yaml, "CSafeLoader", yaml.SafeLoader)
+_UNSEEN = re.compile(r"[^\t\n\r -~\xa0-\u2027\u202f-\u2065\u206a-\ud7ff\ue000-\ufffd\U00010000-\U0010ffff]")
+"""Control characters, line breaks that editors do not show as such, and marks that reorder a line."""
+
+
+def read_yaml(path: Path, file: str) -> tuple[Raw | None, list[Problem]]:
+    """
+    Read one YAML (or JSON) file.
+
+    `file` is the name shown in problems. Returns the data (None if there is none to go on with) and
+    every problem found. Values that were refused stand as null and are listed in `Raw.unreadable`.
+    """
+    text = read_text(path, file)
+    if isinstance(text, Problem):
+        return None, [text]
+    return read_yaml_text(text, file)
+
+
+def read_yaml_text(text: str, file: str, *, pure_python: bool = False) -> tuple[Raw | None, list[Problem]]:
+    """Read YAML from text, as `read_yaml`; `pure_python` takes the slow parser, with the same result."""
+    if match := _UNSEEN.search(text):
+        return None, [_unseen_character(text, match, file)]
+    composer = _Composer(yaml.parse(text, yaml.SafeLoader if pure_python else _FAST_LOADER), file)
+    try:
+        data = composer.document()
+    except yaml.YAMLError as error:
+        return None, [*composer.problems, _syntax_problem(error, text, file)]
+    except _GivenUpError:
+        return None, composer.problems
+    positions = Positions(composer.values, composer.keys)
+    return Raw(data, positions, file, frozenset(composer.unreadable)), composer.problems
+
+
+class _GivenUpError(Exception):
+    """The rest of the file cannot be read; the reason is among the problems."""
+
+
+class _Composer:
+    """Builds plain data from parser events, noting places and problems on the way."""
+
+    def __init__(self, events: Iterator[yaml.Event], file: str) -> None:
+        self.problems: list[Problem] = []
+        self.values: dict[str, Place] = {}
+        self.keys: dict[str, Place] = {}
+        self.unreadable: set[str] = set()
+        self._events = events
+        self._file = file
+
+    def document(self) -> JsonValue:
+        """Return the data of the only document in the file."""
+        next(self._events)  # the start of the stream
+        event = next(self._events)
+        if isinstance(event, yaml.StreamEndEvent):
+            self._refuse(event, "", "empty-file", "the file holds no data")
+            raise _GivenUpError
+        data = self._node(next(self._events), "", 0)
+        next(self._events)  # the end of the document
+        event = next(self._events)
+        if not isinstance(event, yaml.StreamEndEvent):
+            self._refuse(event, "", "many-documents", "a second document starts here", "keep one record in a file")
+        return data
+
+    def _node(self, event: yaml.Event, pointer: str, depth: int) -> JsonValue:
+        mark = event.start_mark
+        self.values[pointer] = (mark.line + 1, mark.column + 1)
+        kind = type(event)
+        if kind is yaml.AliasEvent:
+            self._refuse(event, pointer, "alias", f"*{event.anchor} repeats another value", "write the value out")
+            self.unreadable.add(pointer)
+            return None
+        if event.anchor is not None:
+            self._refuse(event, pointer, "anchor", f"&{event.anchor} names a value for repetition", "remove it")
+        if event.tag is not None:
+            self._refuse(event, pointer, "tag", f"the tag {event.tag} is not allowed", "remove it")
+        if kind is yaml.ScalarEvent:
+            return self._scalar(event, pointer)
+        if depth >= MAX_DEPTH:
+            self._refuse(event, pointer, "too-deep", f"values are nested more than {MAX_DEPTH} deep")
+            raise _GivenUpError
+        return self._mapping(pointer, depth) if kind is yaml.MappingStartEvent else self._sequence(pointer, depth)
+
+    def _sequence(self, pointer: str, depth: int) -> JsonValue:
+        items: list[JsonValue] = []
+        for event in self._events:
+            if type(event) is yaml.SequenceEndEvent:
+                break
+            items.append(self._node(event, f"{pointer}/{len(items)}", depth + 1))
+        return items
+
+    def _mapping(self, pointer: str, depth: int) -> JsonValue:
+        fields: dict[str, JsonValue] = {}
+        for event in self._events:
+            if type(event) is yaml.MappingEndEvent:
+                break
+            key = self._key(event, pointer, depth)
+            if key is None:
+                self._discard(next(self._events), pointer, depth)
+                continue
+            child = join_pointer(pointer, key)
+            mark = event.start_mark
+            if key in fields:
+                hint = f"first given in line {self.keys[child][0]}"
+                self._refuse(event, child, "duplicate-key", f'"{key}" is given twice', hint)
+                self._discard(next(self._events), child, depth)
+                continue
+            self.keys[child] = (mark.line + 1, mark.column + 1)
+            fields[key] = self._node(next(self._events), child, depth + 1)
+        return fields
+
+    def _key(self, event: yaml.Event, pointer: str, depth: int) -> str | None:
+        """Return the text of a key, or None after a problem; the events of the key are used up."""
+        if type(event) is not yaml.ScalarEvent:
+            self._refuse(event, pointer, "key-not-text", "a key must be plain text")
+            if type(event) is not yaml.AliasEvent:
+                self._discard(event, pointer, depth)
+            return None
+        key = cast(str, event.value)
+        if event.anchor is not None:
+            self._refuse(event, join_pointer(pointer, key), "anchor", f"&{event.anchor} names a key", "remove it")
+        if event.tag is not None:
+            self._refuse(event, join_pointer(pointer, key), "tag", f"the tag {event.tag} is not allowed", "remove it")
+        elif event.implicit[0]:
+            if key == "<<":
+                self._refuse(event, pointer, "merge-key", "<< merges another record", "write the fields out")
+                return None
+            if not isinstance(plain_scalar(key), str):
+                self._refuse(event, pointer, "key-not-text", f"the key {key or '(empty)'} is not text", "quote it")
+                return None
+        elif self._has_control(event, pointer):
+            return None
+        return key
+
+    def _scalar(self, event: yaml.Event, pointer: str) -> JsonValue:
+        text = cast(str, event.value)
+        if event.tag is not None or self._has_control(event, pointer):
+            self.unreadable.add(pointer)
+            return None
+        if not event.implicit[0]:
+            return text
+        value = plain_scalar(text)
+        if isinstance(value, ScalarFault):
+            self._refuse(event, pointer, value.rule, value.message, value.hint)
+            self.unreadable.add(pointer)
+            return None
+        return value
+
+    def _has_control(self, event: yaml.Event, pointer: str) -> bool:
+        # Only double quotes can spell such characters; elsewhere they were refused in the text.
+        if event.style != '"' or not (match := _UNSEEN.search(event.value)):
+            return False
+        self._refuse(event, pointer, "control-character", f"the text holds the character {_code(match[0])}")
+        return True
+
+    def _discard(self, event: yaml.Event, pointer: str, depth: int) -> None:
+        """Read a value that has no place in the data, for its problems only."""
+        values, keys, unreadable = self.values, self.keys, self.unreadable
+        self.values, self.keys, self.unreadable = {}, {}, set()
+        self._node(event, pointer, depth + 1)
+        self.values, self.keys, self.unreadable = values, keys, unreadable
+
+    def _refuse(self, event: yaml.Event, pointer: str, rule: str, message: str, hint: str = "") -> None:
+        mark = event.start_mark
+        place = (mark.line + 1, mark.column + 1)
+        self.problems.append(Problem(self._file, *place, pointer, Severity.ERROR, rule, message, hint))
+
+
+def _unseen_character(text: str, match: re.Match[str], file: str) -> Problem:
+    before = text[: match.start()]
+    line, column = before.count("\n") + 1, len(before.rpartition("\n")[2]) + 1
+    message = f"the file holds the character {_code(match[0])}, which cannot be seen"
+    return Problem(file, line, column, "", Severity.ERROR, "control-character", message, "remove it")
+
+
+def _code(character: str) -> str:
+    return f"U+{ord(character):04X}"
+
+
+def _syntax_problem(error: yaml.YAMLError, text: str, file: str) -> Problem:
+    mark = getattr(error, "problem_mark", None) or getattr(error, "context_mark", None)
+    words = getattr(error, "problem", None) or "the file is no YAML"
+    if mark is None:
+        return Problem(file, 1, 1, "", Severity.ERROR, "syntax", str(words))
+    lines = text.splitlines() or [""]
+    line = lines[mark.line] if mark.line < len(lines) else ""
+    character = line[mark.column : mark.column + 1]
+    rule = "tab" if character == "\t" else "syntax"
+    hint = _syntax_hint(str(words), line, character)
+    return Problem(file, mark.line + 1, mark.column + 1, "", Severity.ERROR, rule, str(words), hint)
+
+
+def _syntax_hint(words: str, line: str, character: str) -> str:
+    if character == "\t":
+        return "indent with spaces, not with a tab"
+    if re.search(r"[:-] +[>|]", line):
+        return 'put text that starts with ">" or "|" in quotes'
+    if "mapping values" in words:
+        return 'put text that holds ": " in quotes'
+    if character and character in "%@`":
+        return f"put text that starts with {character} in quotes"
+    return ""

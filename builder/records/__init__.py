@@ -1,0 +1,1 @@
+"""Checked records as frozen dataclasses, and the units they are written in."""

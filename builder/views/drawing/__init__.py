@@ -1,0 +1,1 @@
+"""Geometry of the drawings: sections, interval bars and charts, in the units of their SVG."""
