@@ -31,13 +31,13 @@ _SECONDS_A_DAY = 86_400
 _EPOCH_DAY = date(1970, 1, 1)
 
 
-class PluginConfig(Config):
+class PluginConfig(Config):  # type: ignore[no-untyped-call]  # MkDocs leaves a hook untyped
     """Options of the plugin in `mkdocs.yml`."""
 
     lab = config_options.Type(str, default=".")
 
 
-class EtchwrightPlugin(BasePlugin[PluginConfig]):
+class EtchwrightPlugin(BasePlugin[PluginConfig]):  # type: ignore[no-untyped-call]
     """Pages from records, as generated files; see docs/decisions for why they bypass Markdown."""
 
     def __init__(self) -> None:

@@ -47,8 +47,12 @@ SPREAD_PASSES = 3
 WEIGHT_VARIANCE_FLOOR = 0.15
 """Smallest between-recipe log variance used for weights, so that no one recipe takes over the fit."""
 
-ZERO_VARIANCE_FRACTION = 1e-5
-"""A variance of exactly zero (equal rounded readings) enters as this fraction of the prior's (after Smyth 2004)."""
+MIN_VARIANCE_FRACTION = 1e-3
+"""
+Smallest sample variance in the fit, as a fraction of the prior's: 3 % of its standard deviation.
+
+Two equal rounded readings have variance 0, whose logarithm would swamp every other recipe.
+"""
 
 TRIGAMMA_TOLERANCE = 1e-12
 TRIGAMMA_MAX_STEPS = 60

@@ -17,7 +17,7 @@ from builder.engine.constants import (
     SPREAD_PASSES,
     SPREAD_UNCERTAINTY,
     WEIGHT_VARIANCE_FLOOR,
-    ZERO_VARIANCE_FRACTION,
+    MIN_VARIANCE_FRACTION,
 )
 from builder.engine.errors import DomainError
 from builder.engine.trigamma import degrees_for, log_bias_of, log_variance_of
@@ -182,7 +182,7 @@ def _fit(s2: FloatArray, df: FloatArray, prior: SpreadPrior, pseudo_recipes: int
 
 def _log_moments(s2: FloatArray, df: FloatArray, prior: SpreadPrior, pseudo_recipes: int) -> _LogMoments:
     """Mean and variance of ln(sigma^2) over the recipes, the prior's pseudo-recipes among them."""
-    logs = np.log(np.maximum(s2, ZERO_VARIANCE_FRACTION * prior.s0**2))
+    logs = np.log(np.maximum(s2, MIN_VARIANCE_FRACTION * prior.s0**2))
     logs = logs - np.array([log_bias_of(d) for d in df])
     sampling = np.array([log_variance_of(d) for d in df])
     prior_log = 2 * math.log(prior.s0) - log_bias_of(prior.d0)

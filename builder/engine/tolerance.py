@@ -55,12 +55,14 @@ def zero_failures_upper(n: int, confidence: float) -> float:
         raise DomainError("n", n, "n >= 1")
     if not 0 < confidence < 1:
         raise DomainError("confidence", confidence, "0 < confidence < 1")
-    return 1 - (1 - confidence) ** (1 / n)
+    return float(1 - (1 - confidence) ** (1 / n))
 
 
 def runs_to_see(shift: float, sigma: float, alpha: float, beta: float) -> int:
     """
-    Runs needed to see a shift of the mean, two-sided risk `alpha`, risk of missing it `beta`.
+    Runs needed to see a shift of the mean to one side at a false-alarm risk `alpha`, missing it at risk `beta`.
+
+    For a shift to either side pass half the risk.
 
     `shift` and `sigma` > 0 in one unit. The smallest number that is enough with t quantiles.
 
@@ -76,9 +78,9 @@ def runs_to_see(shift: float, sigma: float, alpha: float, beta: float) -> int:
     if not (shift > 0 and sigma > 0):
         raise DomainError("shift, sigma", (shift, sigma), "> 0")
     ratio2 = (sigma / shift) ** 2
-    n = max(2, math.ceil(ratio2 * (normal(1 - alpha / 2) + normal(1 - beta)) ** 2))
+    n = max(2, math.ceil(ratio2 * (normal(1 - alpha) + normal(1 - beta)) ** 2))
     # t needs more runs than the normal at every n, and falls with n: step up to the first n that is enough.
-    while ratio2 * (student_t(1 - alpha / 2, n - 1) + student_t(1 - beta, n - 1)) ** 2 > n:
+    while ratio2 * (student_t(1 - alpha, n - 1) + student_t(1 - beta, n - 1)) ** 2 > n:
         n += 1
     return n
 

@@ -17,7 +17,7 @@ def with_formulas(markdown: str) -> str:
 
     def block(match: re.Match[str]) -> str:
         mathml = convert(match[1].strip(), display="block")
-        return f'<div class="ew-formula" tabindex="0" role="region" aria-label="formula">{mathml}</div>'
+        return f'<div class="ew-formula" role="group" aria-label="formula" tabindex="0">{mathml}</div>'
 
     def inline(match: re.Match[str]) -> str:
         return convert(match[1].strip())

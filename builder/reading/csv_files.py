@@ -87,7 +87,8 @@ class _Table:
         self._places[""] = (number, 1)
         if len(cells) == 1 and re.search(r"[;\t]", line):
             hint = "save the table with commas between fields"
-            self.refuse((number, 1), "", "not-comma-separated", "the fields are not separated by commas", hint)
+            words = "the fields are not separated by commas"
+            self.refuse((number, 1), "", "not-comma-separated", words, hint)
             return None
         names = [self._column_name(cell, number, cells[:index], columns) for index, cell in enumerate(cells)]
         for missing in _missing(names, columns):
@@ -128,7 +129,9 @@ class _Table:
         """Note a problem."""
         self.problems.append(Problem(self._file, *place, pointer, Severity.ERROR, rule, message, hint))
 
-    def _column_name(self, cell: _Cell, number: int, before: list[_Cell], columns: Columns | None) -> str | None:
+    def _column_name(
+        self, cell: _Cell, number: int, before: list[_Cell], columns: Columns | None
+    ) -> str | None:
         place = (number, cell.column)
         if not cell.text:
             self.refuse(place, "", "unnamed-column", "a column has no name")

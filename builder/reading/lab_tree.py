@@ -149,18 +149,21 @@ def _reference_files(shipped: Shipped) -> Iterator[_Found | Problem]:
     if shipped.reference.is_dir():
         yield from _records(shipped.reference, f"{RECIPES}/reference", None)
     else:
-        yield _error(f"{RECIPES}/reference", "no-reference", "the published records are missing", "install again")
+        words = "the published records are missing"
+        yield _error(f"{RECIPES}/reference", "no-reference", words, "install the program again")
 
 
 def _lab_files(lab: Path, shipped: Shipped) -> Iterator[_Found | Problem]:
     recipes = lab / RECIPES
     if not recipes.is_dir():
-        yield _error(RECIPES, "no-recipes", "there is no such folder here", "name the lab's folder with --lab")
+        hint = "name the lab's folder with --lab"
+        yield _error(RECIPES, "no-recipes", "there is no such folder here", hint)
         return
     own = recipes / "reference"
     if own.exists() and not (shipped.reference.exists() and own.samefile(shipped.reference)):
         hint = "remove it; a fact of your own goes into recipes/<kind>"
-        yield _error(f"{RECIPES}/reference", "reference-is-shipped", "the reference comes with the program", hint)
+        words = "the reference comes with the program"
+        yield _error(f"{RECIPES}/reference", "reference-is-shipped", words, hint)
     yield from _records(recipes, RECIPES, lab.resolve())
 
 
@@ -209,9 +212,11 @@ def _regular(found: _Found) -> Iterator[_Found | Problem]:
 
 
 def _entries(folder: Path) -> list[Path]:
-    return sorted(
-        path for path in folder.iterdir() if not path.name.startswith(".") and path.name not in _READABLE_BY_PEOPLE
-    )
+    return sorted(path for path in folder.iterdir() if not _is_for_people(path.name))
+
+
+def _is_for_people(name: str) -> bool:
+    return name.startswith(".") or name in _READABLE_BY_PEOPLE
 
 
 def _outside(name: str) -> Problem:

@@ -8,7 +8,7 @@ from typing import TypeAlias
 
 from builder.problems import Problem, Severity
 
-JsonValue: TypeAlias = None | bool | int | float | str | list["JsonValue"] | dict[str, "JsonValue"]
+JsonValue: TypeAlias = bool | int | float | str | list["JsonValue"] | dict[str, "JsonValue"] | None
 Place: TypeAlias = tuple[int, int]
 """Line and column, both from 1."""
 

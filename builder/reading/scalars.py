@@ -7,7 +7,7 @@ import re
 from dataclasses import dataclass
 from typing import TypeAlias
 
-Scalar: TypeAlias = None | bool | int | float | str
+Scalar: TypeAlias = bool | int | float | str | None
 
 _WORDS: dict[str, Scalar] = {"": None, "~": None, "null": None, "true": True, "false": False}
 _NUMBER = re.compile(r"-?(?:0|[1-9][0-9]*)(\.[0-9]+)?([eE][+-]?[0-9]+)?")
@@ -45,9 +45,8 @@ def plain_scalar(word: str) -> Scalar | ScalarFault:
         is_whole = match[1] is None and match[2] is None
         return _whole_number(word) if is_whole else _real_number(word)
     if _LEADING_ZERO.fullmatch(word):
-        return ScalarFault(
-            "leading-zero", f"{word} starts with a zero", f'write "{word}" in quotes for text, or drop the zero'
-        )
+        hint = f'write "{word}" in quotes for text, or drop the zero'
+        return ScalarFault("leading-zero", f"{word} starts with a zero", hint)
     if _NOT_FINITE.fullmatch(word):
         return ScalarFault("not-finite", f"{word} is not a finite number", "leave the field out if unknown")
     return word
@@ -58,7 +57,8 @@ def _whole_number(word: str) -> Scalar | ScalarFault:
         value = int(word)
         if abs(value) <= _LARGEST_EXACT:
             return value
-    return ScalarFault("too-large", f"the number {word[:20]} is too large to be kept exactly", "quote it if it is text")
+    message = f"the number {word[:20]} is too large to be kept exactly"
+    return ScalarFault("too-large", message, "quote it if it is text")
 
 
 def _real_number(word: str) -> Scalar | ScalarFault:

@@ -47,5 +47,7 @@ def decode(content: bytes, file: str) -> str | Problem:
     return text.removeprefix(_BYTE_ORDER_MARK)
 
 
-def _problem(file: str, rule: str, message: str, *, line: int = 0, column: int = 0, hint: str = "") -> Problem:
+def _problem(
+    file: str, rule: str, message: str, *, line: int = 0, column: int = 0, hint: str = ""
+) -> Problem:
     return Problem(file, line, column, "", Severity.ERROR, rule, message, hint)

@@ -10,7 +10,7 @@ from __future__ import annotations
 import re
 from collections.abc import Iterator
 from pathlib import Path
-from typing import cast
+from typing import Protocol, cast
 
 import yaml
 
@@ -44,7 +44,8 @@ def read_yaml_text(text: str, file: str, *, pure_python: bool = False) -> tuple[
     """Read YAML from text, as `read_yaml`; `pure_python` takes the slow parser, with the same result."""
     if match := _UNSEEN.search(text):
         return None, [_unseen_character(text, match, file)]
-    composer = _Composer(yaml.parse(text, yaml.SafeLoader if pure_python else _FAST_LOADER), file)
+    loader = yaml.SafeLoader if pure_python else _FAST_LOADER
+    composer = _Composer(cast(Iterator[_Event], yaml.parse(text, loader)), file)
     try:
         data = composer.document()
     except yaml.YAMLError as error:
@@ -55,6 +56,24 @@ def read_yaml_text(text: str, file: str, *, pure_python: bool = False) -> tuple[
     return Raw(data, positions, file, frozenset(composer.unreadable)), composer.problems
 
 
+class _Mark(Protocol):
+    """A place in the file, counted from 0."""
+
+    line: int
+    column: int
+
+
+class _Event(Protocol):
+    """A parser event; which of these attributes it has depends on its class."""
+
+    start_mark: _Mark
+    anchor: str | None
+    tag: str | None
+    implicit: tuple[bool, bool]
+    style: str | None
+    value: str
+
+
 class _GivenUpError(Exception):
     """The rest of the file cannot be read; the reason is among the problems."""
 
@@ -62,7 +81,7 @@ class _GivenUpError(Exception):
 class _Composer:
     """Builds plain data from parser events, noting places and problems on the way."""
 
-    def __init__(self, events: Iterator[yaml.Event], file: str) -> None:
+    def __init__(self, events: Iterator[_Event], file: str) -> None:
         self.problems: list[Problem] = []
         self.values: dict[str, Place] = {}
         self.keys: dict[str, Place] = {}
@@ -81,27 +100,28 @@ class _Composer:
         next(self._events)  # the end of the document
         event = next(self._events)
         if not isinstance(event, yaml.StreamEndEvent):
-            self._refuse(event, "", "many-documents", "a second document starts here", "keep one record in a file")
+            words = "a second document starts here"
+            self._refuse(event, "", "many-documents", words, "keep one record in a file")
         return data
 
-    def _node(self, event: yaml.Event, pointer: str, depth: int) -> JsonValue:
+    def _node(self, event: _Event, pointer: str, depth: int) -> JsonValue:
         mark = event.start_mark
         self.values[pointer] = (mark.line + 1, mark.column + 1)
         kind = type(event)
         if kind is yaml.AliasEvent:
-            self._refuse(event, pointer, "alias", f"*{event.anchor} repeats another value", "write the value out")
+            words = f"*{event.anchor} repeats another value"
+            self._refuse(event, pointer, "alias", words, "write the value out")
             self.unreadable.add(pointer)
             return None
-        if event.anchor is not None:
-            self._refuse(event, pointer, "anchor", f"&{event.anchor} names a value for repetition", "remove it")
-        if event.tag is not None:
-            self._refuse(event, pointer, "tag", f"the tag {event.tag} is not allowed", "remove it")
+        self._refuse_properties(event, pointer)
         if kind is yaml.ScalarEvent:
             return self._scalar(event, pointer)
         if depth >= MAX_DEPTH:
             self._refuse(event, pointer, "too-deep", f"values are nested more than {MAX_DEPTH} deep")
             raise _GivenUpError
-        return self._mapping(pointer, depth) if kind is yaml.MappingStartEvent else self._sequence(pointer, depth)
+        if kind is yaml.MappingStartEvent:
+            return self._mapping(pointer, depth)
+        return self._sequence(pointer, depth)
 
     def _sequence(self, pointer: str, depth: int) -> JsonValue:
         items: list[JsonValue] = []
@@ -131,31 +151,27 @@ class _Composer:
             fields[key] = self._node(next(self._events), child, depth + 1)
         return fields
 
-    def _key(self, event: yaml.Event, pointer: str, depth: int) -> str | None:
+    def _key(self, event: _Event, pointer: str, depth: int) -> str | None:
         """Return the text of a key, or None after a problem; the events of the key are used up."""
         if type(event) is not yaml.ScalarEvent:
             self._refuse(event, pointer, "key-not-text", "a key must be plain text")
             if type(event) is not yaml.AliasEvent:
                 self._discard(event, pointer, depth)
             return None
-        key = cast(str, event.value)
-        if event.anchor is not None:
-            self._refuse(event, join_pointer(pointer, key), "anchor", f"&{event.anchor} names a key", "remove it")
-        if event.tag is not None:
-            self._refuse(event, join_pointer(pointer, key), "tag", f"the tag {event.tag} is not allowed", "remove it")
-        elif event.implicit[0]:
+        key = event.value
+        self._refuse_properties(event, pointer)
+        if event.implicit[0] and event.tag is None:
             if key == "<<":
                 self._refuse(event, pointer, "merge-key", "<< merges another record", "write the fields out")
                 return None
             if not isinstance(plain_scalar(key), str):
-                self._refuse(event, pointer, "key-not-text", f"the key {key or '(empty)'} is not text", "quote it")
+                words = f"the key {key or '(empty)'} is not text"
+                self._refuse(event, pointer, "key-not-text", words, "quote it")
                 return None
-        elif self._has_control(event, pointer):
-            return None
-        return key
+        return None if self._has_control(event, pointer) else key
 
-    def _scalar(self, event: yaml.Event, pointer: str) -> JsonValue:
-        text = cast(str, event.value)
+    def _scalar(self, event: _Event, pointer: str) -> JsonValue:
+        text = event.value
         if event.tag is not None or self._has_control(event, pointer):
             self.unreadable.add(pointer)
             return None
@@ -168,21 +184,28 @@ class _Composer:
             return None
         return value
 
-    def _has_control(self, event: yaml.Event, pointer: str) -> bool:
+    def _refuse_properties(self, event: _Event, pointer: str) -> None:
+        if event.anchor is not None:
+            words = f"&{event.anchor} names a value for repetition"
+            self._refuse(event, pointer, "anchor", words, "remove it")
+        if event.tag is not None:
+            self._refuse(event, pointer, "tag", f"the tag {event.tag} is not allowed", "remove it")
+
+    def _has_control(self, event: _Event, pointer: str) -> bool:
         # Only double quotes can spell such characters; elsewhere they were refused in the text.
         if event.style != '"' or not (match := _UNSEEN.search(event.value)):
             return False
         self._refuse(event, pointer, "control-character", f"the text holds the character {_code(match[0])}")
         return True
 
-    def _discard(self, event: yaml.Event, pointer: str, depth: int) -> None:
+    def _discard(self, event: _Event, pointer: str, depth: int) -> None:
         """Read a value that has no place in the data, for its problems only."""
         values, keys, unreadable = self.values, self.keys, self.unreadable
         self.values, self.keys, self.unreadable = {}, {}, set()
         self._node(event, pointer, depth + 1)
         self.values, self.keys, self.unreadable = values, keys, unreadable
 
-    def _refuse(self, event: yaml.Event, pointer: str, rule: str, message: str, hint: str = "") -> None:
+    def _refuse(self, event: _Event, pointer: str, rule: str, message: str, hint: str = "") -> None:
         mark = event.start_mark
         place = (mark.line + 1, mark.column + 1)
         self.problems.append(Problem(self._file, *place, pointer, Severity.ERROR, rule, message, hint))

@@ -63,10 +63,11 @@ def amount(plain: str, dimension: Dimension, text: str) -> tuple[float, Unit]:
 
 
 def unit_of(spelling: str | None, dimension: Dimension, text: str) -> Unit:
+    """Return the unit of the dimension that is spelled so."""
     if spelling is None:
         hint = f'for example "{example_unit(dimension)}"'
         raise FaultError("unit-missing", f'"{text}" needs a unit of {_words(dimension)}', hint)
-    unit = findunit_of(spelling, dimension)
+    unit = find_unit(spelling, dimension)
     if unit is not None:
         return unit
     elsewhere = dimensions_of(spelling)
@@ -80,13 +81,15 @@ def unit_of(spelling: str | None, dimension: Dimension, text: str) -> Unit:
 
 
 def canonical(number: float, unit: Unit, text: str) -> float:
-    value = unit.tocanonical(number)
+    """Return a number of a unit in the canonical unit, refusing what floats cannot hold."""
+    value = unit.to_canonical(number)
     if not math.isfinite(value) or (value == 0 and number != 0 and unit.offset == 0):
         raise FaultError("not-finite", f'"{text}" is out of the range of numbers')
     return value
 
 
 def number_of(plain: str, text: str) -> float:
+    """Return the decimal number a text states; `text` is the whole quantity, for the message."""
     if not _NUMBER.fullmatch(plain):
         raise not_a_number(plain, text)
     value = float(plain)
@@ -96,10 +99,11 @@ def number_of(plain: str, text: str) -> float:
 
 
 def not_a_number(plain: str, text: str) -> FaultError:
+    """Return the fault of a text that states no number."""
     if _NOT_FINITE.fullmatch(plain):
         return FaultError("not-finite", f'"{text}" is not a finite number', "leave it out if unknown")
     hint = "write a decimal point, and no mark between thousands" if _THOUSANDS.search(plain) else ""
-    return FaultError("not-a-number", f'"{text}" is not a number with a unit', hint)
+    return FaultError("not-a-number", f'"{text}" is not a number', hint)
 
 
 def example_unit(dimension: Dimension) -> str:
@@ -112,5 +116,3 @@ def example_unit(dimension: Dimension) -> str:
 
 def _words(dimension: Dimension) -> str:
     return dimension.value.replace("_", " ")
-
-

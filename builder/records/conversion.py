@@ -120,7 +120,9 @@ def _fields_of(cls: type[object]) -> tuple[tuple[str, str, _Convert], ...]:
     )
 
 
-_PLANS: Callable[[type[object]], tuple[tuple[str, str, _Convert], ...]] = functools.cache(_fields_of)
+_PLANS: Callable[[type[object]], tuple[tuple[str, str, _Convert], ...]] = functools.cache(
+    _fields_of  # type: ignore[assignment]  # a class can be hashed, which its type does not say
+)
 
 
 def _key(hint: object, name: str) -> str:

@@ -8,36 +8,45 @@ import re
 import unicodedata
 from dataclasses import dataclass
 
-from builder.problems import did_you_mean
-from builder.records.unit_table import (
-    CANONICAL,
-    SIGNED,
-    Dimension,
-    Unit,
-    dimensions_of,
-    find_unit,
-    normal_spelling,
-    spellings_of,
+from builder.records.amounts import (
+    AMOUNT,
+    NUMBER,
+    UNIT,
+    FaultError,
+    QuantityFault,
+    amount,
+    canonical,
+    example_unit,
+    not_a_number,
+    number_of,
+    unit_of,
 )
+from builder.records.unit_table import SIGNED, Dimension, find_unit, normal_spelling
+
+__all__ = [
+    "ALL_FORMS",
+    "Dimension",
+    "Form",
+    "Quantity",
+    "QuantityFault",
+    "Sign",
+    "example_unit",
+    "parse_number",
+    "parse_quantity",
+]
 
 _MAX_LENGTH = 80
 """Longest text looked at; a quantity is far shorter."""
 
-_NUMBER = r"[-+]?(?:[0-9]+(?:\.[0-9]*)?|\.[0-9]+)(?:[eE][-+]?[0-9]+)?"
-_UNIT = r"[A-Za-zÅ°º%μµ][^<>=±:,;]*?"
-AMOUNT = re.compile(rf"({_NUMBER})\s*({_UNIT})?")
 _LIMIT = re.compile(r"(<=|>=|<|>)\s*(.*)")
 _PLUS_MINUS = re.compile(r"\s*(?:\+/-|\+-|±)\s*")
-_RANGE = re.compile(rf"({_NUMBER})\s*({_UNIT})??\s*(?:\.\.|(?<![eE])-|\bto\b)\s*({_NUMBER})\s*({_UNIT})?")
-_NOT_FINITE = re.compile(r"[-+]?\.?(?:nan|inf|infinity|∞)(?![A-Za-z]).*", re.IGNORECASE)
+_RANGE = re.compile(rf"({NUMBER})\s*({UNIT})??\s*(?:\.\.|(?<![eE])-|\bto\b)\s*({NUMBER})\s*({UNIT})?")
 _RAISED = re.compile(r"[0-9][⁰¹²³⁴-⁹₀-₉½¼¾⅓⅔⅛]|[½¼¾⅓⅔⅛]")
 """Raised, lowered and broken digits beside digits: normalising would make 102 of 10²."""
 
 _FRACTIONS = frozenset(
     {Dimension.PERCENT, Dimension.MASS_FRACTION, Dimension.VOLUME_FRACTION, Dimension.ATOMIC_FRACTION}
 )
-_USUAL = {Dimension.TEMPERATURE: "degC", Dimension.RATE: "nm/min", Dimension.PRESSURE: "mTorr"}
-"""Units to propose where the canonical one is not the usual one at the bench."""
 
 
 class Form(enum.StrEnum):
@@ -58,6 +67,12 @@ class Sign(enum.StrEnum):
 
 
 ALL_FORMS = frozenset(Form)
+_FORM_WORDS = {
+    Form.VALUE: "a single number",
+    Form.RANGE: "a range",
+    Form.BELOW: "a limit",
+    Form.ABOVE: "a limit",
+}
 
 
 @dataclass(frozen=True)
@@ -126,7 +141,8 @@ def parse_quantity(
     try:
         quantity = _parse(text, dimension)
         if quantity.form not in forms:
-            raise FaultError("form-not-allowed", f'"{text}": {_form_words(quantity.form)} is not allowed here')
+            message = f'"{text}": {_FORM_WORDS[quantity.form]} is not allowed here'
+            raise FaultError("form-not-allowed", message, "give a single number with its unit")
         _check_sign(quantity, sign)
     except FaultError as error:
         return error.fault
@@ -195,7 +211,7 @@ def _range(match: re.Match[str], dimension: Dimension, text: str) -> Quantity:
 
 def _with_tolerance(before: str, after: str, dimension: Dimension, text: str) -> Quantity:
     tolerance = AMOUNT.fullmatch(after)
-    bare = re.fullmatch(_NUMBER, before)
+    bare = re.fullmatch(NUMBER, before)
     if tolerance is None:
         raise not_a_number(after, text)
     spelling = tolerance[2]
@@ -215,7 +231,8 @@ def _half_width(number: float, spelling: str | None, value: float, dimension: Di
     if spelling is not None and normal_spelling(spelling) == "%" and dimension is not Dimension.PERCENT:
         if dimension in _FRACTIONS or dimension is Dimension.TEMPERATURE:
             hint = f'give it in "{example_unit(dimension)}"'
-            raise FaultError("unit-mismatch", f'"{text}": a percentage of this can be read in two ways', hint)
+            message = f'"{text}": a percentage of this can be read in two ways'
+            raise FaultError("unit-mismatch", message, hint)
         return abs(value) * number / 100
     if dimension is Dimension.TEMPERATURE:
         dimension = Dimension.TEMPERATURE_DIFFERENCE
@@ -232,7 +249,3 @@ def _check_sign(quantity: Quantity, sign: Sign) -> None:
     # "Less than nothing" would claim that nothing at all was there: no measurement can say so.
     if quantity.high == 0 or (sign is Sign.POSITIVE and min(numbers) == 0):
         raise FaultError("not-positive", f'"{quantity.text}" must be more than zero')
-
-
-def _form_words(form: Form) -> str:
-    return {Form.VALUE: "a single number", Form.RANGE: "a range"}.get(form, "a limit")

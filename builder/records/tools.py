@@ -6,6 +6,7 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 
 from builder.records.conversion import Setting
+from builder.records.films import Film
 from builder.records.record import Record
 from builder.records.terms import Method, ToolKind
 
@@ -40,3 +41,12 @@ class Tool(Record):
     container: str | None = None
     chemicals: tuple[str, ...] = ()
     note: str | None = None
+
+    def refusal(self, film: Film) -> str | None:
+        """Return why the film must not enter, or None if it may; a film that is forbidden is never allowed."""
+        names = {film.id, f"family:{film.family}"}
+        if hits := names.intersection(self.films_forbidden):
+            return f"{self.name} forbids {min(hits)}"
+        if self.films_allowed and not names.intersection(self.films_allowed):
+            return f"{self.name} does not list {film.id} among the films it allows"
+        return None

@@ -223,6 +223,8 @@ def _mixing_row(records: LabRecords, rule: MixingRule, other: Side) -> MixingRow
 
 
 def _side_link(records: LabRecords, side: Side) -> Link | None:
+    if side.id is None:
+        return None
     if side.kind is SideKind.CHEMICAL and side.id in records.chemicals:
         return chemical_link(records, side.id)
     if side.kind is SideKind.ETCHANT and side.id in records.etchants:

@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from builder.records.lab import LabRecords
-from builder.records.record import Sourced
+from builder.records.record import SourcedEntry, SourcedRecord
 from builder.records.terms import Trust
 from builder.views.drawing.shape import family_fill
 from builder.views.link import Link, PageKind, page_url, source_url
@@ -70,7 +70,7 @@ def recipe_link(records: LabRecords, etch_id: str) -> Link:
     return Link(records.etches[etch_id].name, page_url(PageKind.RECIPE, etch_id))
 
 
-def citation(records: LabRecords, fact: Sourced) -> Citation:
+def citation(records: LabRecords, fact: SourcedRecord | SourcedEntry) -> Citation:
     """Return the citation of a published fact."""
     return Citation(source_link(records, fact.source), fact.where or "", TRUST_NAMES[fact.trust])
 

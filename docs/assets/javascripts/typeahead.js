@@ -149,7 +149,7 @@
         kept.forEach(function (entry, index) {
           const button = document.createElement("button");
           button.type = "button";
-          button.className = "md-button";
+          button.className = "ew-button";
           button.textContent = entry.name + " ×";
           button.setAttribute("aria-label", "Leave out " + entry.name);
           button.addEventListener("click", function () {
