@@ -22,6 +22,7 @@ from mkdocs.structure.toc import AnchorLink, TableOfContents
 from builder import pipeline
 from builder.pages.exchange import MARKER
 from builder.pages.formulas import with_formulas
+from builder.pages.method_figures import with_figures
 from builder.pages.page import FinishedSite, Page
 from builder.pages.shipped_files import find_docs, find_mkdocs_file, find_theme
 from builder.problems import Problem, format_text
@@ -96,7 +97,7 @@ class EtchwrightPlugin(BasePlugin[PluginConfig]):  # type: ignore[no-untyped-cal
         """Put in our finished HTML."""
         ours = self._pages.get(page.file.src_uri)
         if ours is None:
-            return html
+            return with_figures(html)
         # Only the meta title: the page's own one names its tab in the navigation.
         page.meta.update(
             {

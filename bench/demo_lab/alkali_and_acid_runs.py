@@ -116,7 +116,6 @@ ALKALI_AND_ACID_RUNS: tuple[RecipeRuns, ...] = (
             FilmRuns("sin-lpcvd", 0, 150, (1200,), 0.3, (1, 3), own_wafer=True),
             FilmRuns("si-100", 0, 1000, (1200,), 0.6, (0, 3), own_wafer=True, note=_STEP),
             FilmRuns("au", 0, 210, (1200,), 1.5, (2,), own_wafer=True),
-            FilmRuns("al-si", 170, 600, (60,), 4, (1,), own_wafer=True),
         ),
     ),
 )

@@ -26,7 +26,16 @@ DEEP_SILICON_AND_LIFT_OFF_RUNS: tuple[RecipeRuns, ...] = (
             FilmRuns("sio2-thermal-wet", 18, 2000, (1800,), 2, (3, 5, 8, 10, 13)),
             FilmRuns("al-cu", 0.05, 600, (1800,), 1.2, (4, 9, 12), own_wafer=True),
             FilmRuns(
-                "si-100", 3600, 525000, (1800,), 600, (5, 8, 11), own_wafer=True, window_um=10, log_shift=-0.22, note=_DEPTH
+                "si-100",
+                3600,
+                525000,
+                (1800,),
+                600,
+                (5, 8, 11),
+                own_wafer=True,
+                window_um=10,
+                log_shift=-0.22,
+                note=_DEPTH,
             ),
             FilmRuns(
                 "si-100",

@@ -22,12 +22,14 @@ FLUORINE_RUNS: tuple[RecipeRuns, ...] = (
         chamber=True,
         events={4: Event("clean")},
         films=(
-            FilmRuns("sio2-thermal-wet", 42, 520, (300,), 0.8, site_spread=0.03),
+            FilmRuns("sio2-thermal-wet", 42, 520, (300,), 0.8, site_spread=0.03, window_um=100),
             FilmRuns("resist-positive-a", 14.5, 1390, (300,), 3, prior="hard-baked"),
             FilmRuns("si-100", 6, 1000, (600,), 1, (4, 6, 9, 12), own_wafer=True, note=_STEP),
             FilmRuns("sin-lpcvd", 37, 300, (240,), 0.6, (5, 10), own_wafer=True),
             FilmRuns("cr", 0.25, 60, (300,), 0.6, (4, 7, 11, 13), own_wafer=True),
-            FilmRuns("sio2-thermal-wet", 42, 520, (300,), 6, (8,), own_wafer=True, window_um=1, log_shift=-0.15),
+            FilmRuns(
+                "sio2-thermal-wet", 42, 520, (300,), 6, (8,), own_wafer=True, window_um=1, log_shift=-0.15
+            ),
         ),
     ),
     RecipeRuns(
@@ -66,7 +68,16 @@ FLUORINE_RUNS: tuple[RecipeRuns, ...] = (
             FilmRuns("resist-positive-a", 92, 1390, (180,), 3, prior="hard-baked"),
             FilmRuns("sio2-thermal-wet", 28, 500, (300,), 0.8, (2, 5, 9, 13), own_wafer=True),
             FilmRuns(
-                "si-100", 820, 8000, (180,), 20, (4, 10), own_wafer=True, window_um=3, log_shift=-0.14, note="narrow trench"
+                "si-100",
+                820,
+                8000,
+                (180,),
+                20,
+                (4, 10),
+                own_wafer=True,
+                window_um=3,
+                log_shift=-0.14,
+                note="narrow trench",
             ),
             FilmRuns(
                 "si-100",

@@ -34,7 +34,9 @@ METAL_BATH_RUNS: tuple[RecipeRuns, ...] = (
             ),
             FilmRuns("al-si", 640, 600, (18, 28, 38, 48), 4, (2, 8, 11, 14), induction_s=6),
             FilmRuns("al-cu", 585, 600, (40,), 4, (1, 5, 8, 12, 15), induction_s=6, own_wafer=True),
-            FilmRuns("resist-positive-a", 0, 1390, (600,), 3, (0, 6, 9, 13), own_wafer=True, prior="hard-baked"),
+            FilmRuns(
+                "resist-positive-a", 0, 1390, (600,), 3, (0, 6, 9, 13), own_wafer=True, prior="hard-baked"
+            ),
             FilmRuns("sio2-thermal-wet", 0, 500, (1800,), 0.5, (1, 7, 10, 14), own_wafer=True),
             FilmRuns("ti", 0, 100, (900,), 0.8, (3, 8, 12), own_wafer=True),
             FilmRuns("si-100", 0, 1000, (1800,), 0.6, (4, 11), own_wafer=True, note="step height"),
@@ -113,7 +115,9 @@ METAL_BATH_RUNS: tuple[RecipeRuns, ...] = (
         films=(
             FilmRuns("w", 140, 220, (60,), 1),
             FilmRuns("tiw", 45, 150, (120,), 1, (2, 5), own_wafer=True),
-            FilmRuns("resist-positive-a", 0.6, 1390, (300,), 3, (1, 4, 6), own_wafer=True, prior="hard-baked"),
+            FilmRuns(
+                "resist-positive-a", 0.6, 1390, (300,), 3, (1, 4, 6), own_wafer=True, prior="hard-baked"
+            ),
             FilmRuns("sio2-thermal-wet", 0, 500, (1200,), 0.5, (0, 3, 7), own_wafer=True),
             FilmRuns("sin-lpcvd", 0, 150, (1200,), 0.3, (5,), own_wafer=True),
         ),

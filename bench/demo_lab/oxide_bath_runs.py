@@ -23,7 +23,9 @@ OXIDE_BATH_RUNS: tuple[RecipeRuns, ...] = (
         events={3: Event("new bath")},
         films=(
             FilmRuns("sio2-thermal-wet", 101, 520, (180,), 0.8, coarse_u_nm=2.5, site_spread=0.021),
-            FilmRuns("resist-positive-a", 0, 1380, (1200,), 3, (0, 3, 6, 9, 11), own_wafer=True, prior="hard-baked"),
+            FilmRuns(
+                "resist-positive-a", 0, 1380, (1200,), 3, (0, 3, 6, 9, 11), own_wafer=True, prior="hard-baked"
+            ),
             FilmRuns("si-100", 0, 1000, (1800,), 0.6, (2, 5, 8, 12), own_wafer=True, note=_STEP),
             FilmRuns("sin-lpcvd", 0.85, 150, (1200,), 0.3, (1, 4, 7, 10), own_wafer=True),
             FilmRuns("al-si", 138, 600, (60,), 4, (4, 10), own_wafer=True),
@@ -109,7 +111,7 @@ OXIDE_BATH_RUNS: tuple[RecipeRuns, ...] = (
         bath="tihf",
         fresh_bath=True,
         films=(
-            FilmRuns("ti", 980, 200, (7,), 2, prior="vented overnight"),
+            FilmRuns("ti", 980, 200, (7,), 2, prior="in air overnight"),
             FilmRuns("sio2-thermal-wet", 11.5, 500, (300,), 0.6, (1, 4, 7), own_wafer=True),
             FilmRuns("au", 0, 210, (300,), 1.5, (2, 5, 8), own_wafer=True),
             FilmRuns("resist-positive-a", 0, 1400, (180,), 3, (3, 6), own_wafer=True, prior="hard-baked"),

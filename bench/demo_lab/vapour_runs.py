@@ -28,7 +28,9 @@ VAPOUR_RUNS: tuple[RecipeRuns, ...] = (
             FilmRuns("si-100", 0, 1000, (1800,), 0.6, (2, 4, 8, 11), own_wafer=True, note=_STEP),
             FilmRuns("poly-si-undoped", 0, 450, (1800,), 0.5, (3, 7, 10), own_wafer=True),
             FilmRuns("si-soi-device", 0, 2000, (1800,), 1, (3, 6, 9, 11), own_wafer=True),
-            FilmRuns("sio2-box", 68, 2000, (600,), 2, (3, 5, 7, 8, 10, 11), own_wafer=True, prior="dehydrated"),
+            FilmRuns(
+                "sio2-box", 68, 2000, (600,), 2, (3, 5, 7, 8, 10, 11), own_wafer=True, prior="dehydrated"
+            ),
             FilmRuns("al-cu", 0, 600, (1800,), 1.2, (4, 6, 9, 11), own_wafer=True, prior="dehydrated"),
             FilmRuns("sin-low-stress", 1.8, 500, (900,), 0.5, (2, 8), own_wafer=True),
             FilmRuns("al2o3-ald-lab", 0, 50, (1800,), 0.2, (7,), own_wafer=True),
@@ -59,8 +61,20 @@ VAPOUR_RUNS: tuple[RecipeRuns, ...] = (
         load_cm2=_CHIP_CM2,
         events={3: Event("clean")},
         films=(
-            FilmRuns("poly-si-undoped", 185, 900, (180,), 3, prior="native oxide dipped", carrier="10 mm chip"),
-            FilmRuns("si-100", 470, 5000, (300,), 15, (3, 4, 6, 8, 10), own_wafer=True, carrier="10 mm chip", note=_STEP),
+            FilmRuns(
+                "poly-si-undoped", 185, 900, (180,), 3, prior="native oxide dipped", carrier="10 mm chip"
+            ),
+            FilmRuns(
+                "si-100",
+                470,
+                5000,
+                (300,),
+                15,
+                (3, 4, 6, 8, 10),
+                own_wafer=True,
+                carrier="10 mm chip",
+                note=_STEP,
+            ),
             FilmRuns(
                 "si-100",
                 470,

@@ -6,12 +6,26 @@ Other layers import from here. No files, no clock, no randomness without a gener
 
 from __future__ import annotations
 
+from builder.engine.allowed import (
+    Allowance,
+    allowed_mask,
+    allowed_other,
+    allowed_under,
+)
 from builder.engine.conflict import (
     LogInterval,
     intervals_conflict,
 )
 from builder.engine.errors import (
     DomainError,
+)
+from builder.engine.evidence import (
+    LimitedBand,
+    PublishedKind,
+    PublishedValue,
+    RateBand,
+    envelope,
+    widest,
 )
 from builder.engine.individuals import (
     EwmaPoint,
@@ -36,11 +50,36 @@ from builder.engine.line_fit import (
     new_depth_at,
     time_to_depth,
 )
+from builder.engine.loss import (
+    UNKNOWN_SPAN,
+    Exposure,
+    Span,
+    below,
+    loss,
+    open_by_look,
+    open_by_timer,
+    under_by_look,
+    under_by_timer,
+    undercut,
+)
 from builder.engine.next_run import (
     NextRun,
     NextRunKind,
     predict_next_run,
     sample_variance,
+)
+from builder.engine.plan_rules import (
+    FIRST_LOOK_FRACTION,
+    GOOD_MARGIN,
+    ISOTROPIC_UNDERCUT,
+    REFERENCE_CONFIDENCE,
+    ROOM_TEMPERATURE_K,
+    RUN_SPAN,
+    TEMPERATURE_MATCH_K,
+    TIMED_RATIO,
+    TWO_EDGES,
+    TWO_FACES,
+    UNTESTED_LIMIT_S,
 )
 from builder.engine.pooling import (
     DegreesRule,
@@ -60,6 +99,10 @@ from builder.engine.quantiles import (
     normal_cdf,
     student_t,
     two_sided_t,
+)
+from builder.engine.rank import (
+    Rank,
+    worst_rank,
 )
 from builder.engine.run_rate import (
     RunRate,
@@ -89,6 +132,14 @@ from builder.engine.spread import (
     leave_one_out,
     moderated,
 )
+from builder.engine.timing import (
+    UNKNOWN_SCHEDULE,
+    Cut,
+    Mode,
+    Schedule,
+    end_mode,
+    schedule,
+)
 from builder.engine.tolerance import (
     prediction_factor,
     runs_to_see,
@@ -97,35 +148,80 @@ from builder.engine.tolerance import (
     tolerance_factor_two_sided,
     zero_failures_upper,
 )
+from builder.engine.verdict import (
+    Ground,
+    Grounds,
+    Verdict,
+    Word,
+    capped,
+    film_word,
+    worst,
+)
 
 __all__ = [
+    "FIRST_LOOK_FRACTION",
+    "GOOD_MARGIN",
+    "ISOTROPIC_UNDERCUT",
+    "REFERENCE_CONFIDENCE",
+    "ROOM_TEMPERATURE_K",
+    "RUN_SPAN",
+    "TEMPERATURE_MATCH_K",
+    "TIMED_RATIO",
+    "TWO_EDGES",
+    "TWO_FACES",
+    "UNKNOWN_SCHEDULE",
+    "UNKNOWN_SPAN",
+    "UNTESTED_LIMIT_S",
+    "Allowance",
     "CensoredFit",
+    "Cut",
     "DegreesRule",
     "DetectionLimits",
     "DomainError",
     "EwmaPoint",
+    "Exposure",
     "FiellerRatio",
+    "Ground",
+    "Grounds",
     "IndividualsChart",
     "Interval",
+    "LimitedBand",
     "LineFit",
     "LogInterval",
+    "Mode",
     "NextRun",
     "NextRunKind",
     "Pooled",
     "Prediction",
+    "PublishedKind",
+    "PublishedValue",
+    "Rank",
+    "RateBand",
     "RunRate",
+    "Schedule",
     "Selectivity",
+    "Span",
     "Spread",
     "SpreadPrior",
     "TimeToDepth",
     "Trend",
     "TrendAdjusted",
+    "Verdict",
+    "Word",
+    "allowed_mask",
+    "allowed_other",
+    "allowed_under",
+    "below",
+    "capped",
     "current_series",
     "currie",
     "dersimonian_laird",
+    "end_mode",
+    "envelope",
     "ewma_chart",
     "feldman_cousins_upper",
     "fieller_ratio",
+    "film_word",
     "find_trend",
     "fit_line",
     "fit_spread",
@@ -136,12 +232,15 @@ __all__ = [
     "intervals_conflict",
     "leave_one_out",
     "left_censored_normal",
+    "loss",
     "mean_depth_at",
     "mean_interval",
     "moderated",
     "new_depth_at",
     "normal",
     "normal_cdf",
+    "open_by_look",
+    "open_by_timer",
     "paired_selectivity",
     "paule_mandel",
     "plain_interval",
@@ -154,6 +253,7 @@ __all__ = [
     "run_rate",
     "runs_to_see",
     "sample_variance",
+    "schedule",
     "sigma_upper_factor",
     "split_at_events",
     "student_t",
@@ -162,6 +262,12 @@ __all__ = [
     "tolerance_factor_two_sided",
     "trend_adjusted",
     "two_sided_t",
+    "under_by_look",
+    "under_by_timer",
+    "undercut",
     "von_neumann_ratio",
+    "widest",
+    "worst",
+    "worst_rank",
     "zero_failures_upper",
 ]

@@ -12,12 +12,12 @@ from numpy.typing import NDArray
 from builder.engine.constants import (
     LEAVE_ONE_OUT_BELOW,
     MIN_FITTED_RECIPES,
+    MIN_VARIANCE_FRACTION,
     PSEUDO_RECIPE_DF,
     PSEUDO_RECIPES,
     SPREAD_PASSES,
     SPREAD_UNCERTAINTY,
     WEIGHT_VARIANCE_FLOOR,
-    MIN_VARIANCE_FRACTION,
 )
 from builder.engine.errors import DomainError
 from builder.engine.trigamma import degrees_for, log_bias_of, log_variance_of

@@ -20,6 +20,7 @@ def with_formulas(markdown: str) -> str:
         return f'<div class="ew-formula" role="group" aria-label="formula" tabindex="0">{mathml}</div>'
 
     def inline(match: re.Match[str]) -> str:
-        return convert(match[1].strip())
+        # The span keeps Markdown from taking a formula at the start of a line for a block of its own.
+        return f"<span>{convert(match[1].strip())}</span>"
 
     return _INLINE.sub(inline, _BLOCK.sub(block, markdown))

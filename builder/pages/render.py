@@ -13,6 +13,7 @@ from markupsafe import Markup
 
 from builder.pages.links import allowed_url, relative_url
 from builder.pages.page import Heading, Page
+from builder.views.number_text import in_words
 
 _SCRIPT_ESCAPES = str.maketrans(
     {"<": "\\u003c", ">": "\\u003e", "&": "\\u0026", "\u2028": "\\u2028", "\u2029": "\\u2029"}
@@ -41,13 +42,19 @@ def render_page(template: str, view: PageView) -> Page:
         .get_template(f"{template}.html.j2")
         .render(view=view, href=partial(relative_url, view.url))
     )
-    return Page(view.url, view.title, _headings(html), html, view.search_text, view.description)
+    title, description = in_words(view.title), in_words(view.description)
+    return Page(view.url, title, _headings(html), html, view.search_text, description)
 
 
 def script_json(value: object) -> Markup:
     """Return a value as JSON that may stand inside a script element, whatever text is in it."""
     text = json.dumps(value, ensure_ascii=False, allow_nan=False, sort_keys=True, separators=(",", ":"))
     return Markup(text.translate(_SCRIPT_ESCAPES))
+
+
+def _in_words(value: object) -> object:
+    """Text of records is shown with the signs people read; markup stays as it is."""
+    return in_words(value) if isinstance(value, str) and not isinstance(value, Markup) else value
 
 
 def _headings(html: str) -> tuple[Heading, ...]:
@@ -63,6 +70,7 @@ def _environment() -> Environment:
         loader=PackageLoader("builder.pages"),
         autoescape=True,
         undefined=StrictUndefined,
+        finalize=_in_words,
         trim_blocks=True,
         lstrip_blocks=True,
     )

@@ -76,10 +76,15 @@ class RawFile:
 
 @dataclass(frozen=True)
 class LabFiles:
-    """All files of a lab and of the reference, ordered by kind, id and origin, with the problems met."""
+    """
+    All files of a lab and of the reference, ordered by kind, id and origin, with the problems met.
+
+    `unread` holds kind and id of files that gave no data at all.
+    """
 
     files: tuple[RawFile, ...]
     problems: tuple[Problem, ...]
+    unread: tuple[tuple[str, str], ...] = ()
 
     def of_kind(self, kind: Kind) -> tuple[RawFile, ...]:
         """Return the files of one kind, ordered by id."""
@@ -132,6 +137,7 @@ def read_lab(lab: Path, *, columns: Columns | None = None, shipped: Shipped | No
             else:
                 found.append((origin, item))
     files = []
+    unread = []
     for origin, item in found:
         if item.kind is Kind.RUNS:
             raw, faults = read_csv(item.path, item.file, columns)
@@ -140,8 +146,10 @@ def read_lab(lab: Path, *, columns: Columns | None = None, shipped: Shipped | No
         problems += faults
         if raw is not None:
             files.append(RawFile(item.kind, item.path.stem, origin, raw))
+        else:
+            unread.append((str(item.kind), item.path.stem))
     files.sort(key=lambda file: (file.kind, file.id, file.origin))
-    return LabFiles(tuple(files), tuple(problems))
+    return LabFiles(tuple(files), tuple(problems), tuple(unread))
 
 
 def _reference_files(shipped: Shipped) -> Iterator[_Found | Problem]:

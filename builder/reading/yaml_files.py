@@ -107,7 +107,7 @@ class _Composer:
     def _node(self, event: _Event, pointer: str, depth: int) -> JsonValue:
         mark = event.start_mark
         self.values[pointer] = (mark.line + 1, mark.column + 1)
-        kind = type(event)
+        kind: type[object] = type(event)
         if kind is yaml.AliasEvent:
             words = f"*{event.anchor} repeats another value"
             self._refuse(event, pointer, "alias", words, "write the value out")
@@ -126,7 +126,7 @@ class _Composer:
     def _sequence(self, pointer: str, depth: int) -> JsonValue:
         items: list[JsonValue] = []
         for event in self._events:
-            if type(event) is yaml.SequenceEndEvent:
+            if _is(event, yaml.SequenceEndEvent):
                 break
             items.append(self._node(event, f"{pointer}/{len(items)}", depth + 1))
         return items
@@ -134,7 +134,7 @@ class _Composer:
     def _mapping(self, pointer: str, depth: int) -> JsonValue:
         fields: dict[str, JsonValue] = {}
         for event in self._events:
-            if type(event) is yaml.MappingEndEvent:
+            if _is(event, yaml.MappingEndEvent):
                 break
             key = self._key(event, pointer, depth)
             if key is None:
@@ -153,9 +153,9 @@ class _Composer:
 
     def _key(self, event: _Event, pointer: str, depth: int) -> str | None:
         """Return the text of a key, or None after a problem; the events of the key are used up."""
-        if type(event) is not yaml.ScalarEvent:
+        if not _is(event, yaml.ScalarEvent):
             self._refuse(event, pointer, "key-not-text", "a key must be plain text")
-            if type(event) is not yaml.AliasEvent:
+            if not _is(event, yaml.AliasEvent):
                 self._discard(event, pointer, depth)
             return None
         key = event.value
@@ -209,6 +209,10 @@ class _Composer:
         mark = event.start_mark
         place = (mark.line + 1, mark.column + 1)
         self.problems.append(Problem(self._file, *place, pointer, Severity.ERROR, rule, message, hint))
+
+
+def _is(event: object, kind: type[object]) -> bool:
+    return type(event) is kind
 
 
 def _unseen_character(text: str, match: re.Match[str], file: str) -> Problem:

@@ -12,7 +12,7 @@ from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
 from typing import Annotated, TypeAlias, TypeVar
 
-from builder.records.quantities import Form, Quantity, parse_quantity
+from builder.records.quantities import Form, Quantity, parse_number, parse_quantity
 from builder.records.unit_table import Dimension
 
 Data: TypeAlias = Mapping[str, object]
@@ -166,10 +166,19 @@ def _plain_converter(hint: object, dimensions: tuple[Dimension, ...]) -> _Conver
     if hint is datetime.date:
         return lambda value: datetime.date.fromisoformat(str(value))
     if hint is float:
-        return lambda value: float(str(value))
+        return _number
     if dataclasses.is_dataclass(hint):
         return functools.partial(_as_record, hint)
     return lambda value: value
+
+
+def _number(value: object) -> float:
+    if isinstance(value, str):
+        number = parse_number(value)
+        assert isinstance(number, float), value
+        return number
+    assert isinstance(value, int | float)
+    return float(value)
 
 
 def _as_record(cls: type[object], value: object) -> object:

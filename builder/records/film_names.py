@@ -25,10 +25,13 @@ class FilmNames:
         """Return the index of the films."""
         by_form: dict[str, list[str]] = {}
         names: dict[str, list[str]] = {}
-        for film in sorted(films, key=lambda film: film.id):
-            for name in (film.id, film.name, *film.synonyms, *([film.formula] if film.formula else [])):
-                _add(by_form, _form(name), film.id)
-                _add(names, name, film.id)
+        # A film called so goes before one that only has the formula, and a film before a family.
+        ordered = sorted(films, key=lambda film: (film.is_family, film.id))
+        called = [(film, name) for film in ordered for name in (film.id, film.name, *film.synonyms)]
+        made_of = [(film, film.formula) for film in ordered if film.formula]
+        for film, name in (*called, *made_of):
+            _add(by_form, _form(name), film.id)
+            _add(names, name, film.id)
         return cls(
             {form: tuple(ids) for form, ids in by_form.items()},
             {name: tuple(ids) for name, ids in names.items()},
@@ -36,7 +39,7 @@ class FilmNames:
 
     def find(self, word: str) -> tuple[str, ...]:
         """
-        Return the ids of the films called so, ordered; empty if none is.
+        Return the ids of the films called so, the likeliest first; empty if none is.
 
         Case, blanks, hyphens and the height of digits make no difference: `SiO₂` finds the oxides.
         """

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import functools
 from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass, field
 from typing import TypeVar
@@ -27,7 +28,7 @@ from builder.records.runs import Run, runs_from
 from builder.records.safety import Container, GhsCode, Group, MixingRule, PlasmaHazard, Precaution
 from builder.records.samples import Sample
 from builder.records.settings import LabSettings, SpreadRecord, settings_over
-from builder.records.terms import Origin
+from builder.records.terms import Origin, SideKind
 from builder.records.tools import Tool
 
 R = TypeVar("R", bound=Record)
@@ -77,6 +78,15 @@ class LabRecords:
     runs: Mapping[str, tuple[Run, ...]] = field(default_factory=dict)
     samples: Mapping[str, Sample] = field(default_factory=dict)
     film_names: FilmNames = field(default_factory=lambda: FilmNames.of(()))
+
+    @functools.cached_property
+    def mixing_by_side(self) -> Mapping[tuple[SideKind, str], tuple[MixingRule, ...]]:
+        """Every mixing rule by what either of its sides names."""
+        by_side: dict[tuple[SideKind, str], list[MixingRule]] = {}
+        for rule in self.mixing.values():
+            for handle in {rule.a.handle, rule.b.handle}:
+                by_side.setdefault(handle, []).append(rule)
+        return {handle: tuple(rules) for handle, rules in by_side.items()}
 
 
 def build_lab(files: Iterable[CheckedFile]) -> LabRecords:

@@ -24,6 +24,11 @@ class Side:
     id: str | None = None
     text: str | None = None
 
+    @property
+    def handle(self) -> tuple[SideKind, str]:
+        """How the side names its thing: a kind, and an id or words."""
+        return self.kind, self.id or self.text or ""
+
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class MixingRule(Record):

@@ -116,9 +116,9 @@ class Sample(Record):
     back: SampleFilm | None = None
     is_back_protected: bool = False
     edge: Edge | None = None
-    goal: Goal = Goal()  # noqa: RUF009  frozen, so shared without harm
-    limits: Limits = Limits()  # noqa: RUF009
-    mount: Mount = Mount()  # noqa: RUF009
+    goal: Goal = Goal()
+    limits: Limits = Limits()
+    mount: Mount = Mount()
     prior: tuple[str, ...] = ()
     steps: tuple[SequenceStep, ...] = ()
     temperature: Temperature | None = None

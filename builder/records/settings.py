@@ -135,14 +135,24 @@ class LabSettings(Record):
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
+class FitWithout:
+    """Fitted spread of one method with one recipe left out, for that recipe."""
+
+    recipe: str
+    s0: float
+    d0: float
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
 class FittedSpread:
-    """Fitted spread of one method, with what entered the fit."""
+    """Fitted spread of one method, with what entered the fit; `without` only where recipes are few."""
 
     s0: float
     d0: float
     recipes: int
     runs: int
     from_prior: bool
+    without: tuple[FitWithout, ...] = ()
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -43,7 +43,7 @@ class Tool(Record):
     note: str | None = None
 
     def refusal(self, film: Film) -> str | None:
-        """Return why the film must not enter, or None if it may; a film that is forbidden is never allowed."""
+        """Return why the film must not enter, or None if it may; what is forbidden is never allowed."""
         names = {film.id, f"family:{film.family}"}
         if hits := names.intersection(self.films_forbidden):
             return f"{self.name} forbids {min(hits)}"

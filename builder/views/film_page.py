@@ -67,7 +67,7 @@ def _facts(records: LabRecords, film: Film) -> tuple[Fact, ...]:
         ("Family", FAMILY_NAMES[film.family]),
         ("Deposition", film.deposition),
         ("As a barrier", None if film.is_family else BARRIER_WORDS[film.barrier]),
-        ("In a couple", film.electrical.value if film.electrical else None),
+        ("Electrically", film.electrical.value if film.electrical else None),
         ("Density", as_written(film.density.text) if film.density else None),
         ("Molar mass", as_written(film.molar_mass.text) if film.molar_mass else None),
         ("Refractive index", as_recorded(film.refractive_index) if film.refractive_index else None),

@@ -9,6 +9,7 @@ from datetime import date
 from builder.records.lab import LabRecords
 from builder.records.terms import Status
 from builder.views.link import PageKind, page_url
+from builder.views.number_text import in_words
 from builder.views.recipe_rows import NO_RUN, RecipeRow, recipe_rows
 from builder.views.references import FilmRef, film_ref
 from builder.views.words import FAMILY_NAMES
@@ -90,7 +91,7 @@ def named_pages(records: LabRecords) -> tuple[NamedPage, ...]:
     films = [
         NamedPage(
             film.id,
-            film.name,
+            in_words(film.name),
             film.synonyms,
             "film",
             page_url(PageKind.FILM, film.id),
@@ -101,7 +102,7 @@ def named_pages(records: LabRecords) -> tuple[NamedPage, ...]:
     etchants = [
         NamedPage(
             one.id,
-            one.name,
+            in_words(one.name),
             one.synonyms,
             "etchant",
             page_url(PageKind.ETCHANT, one.id),

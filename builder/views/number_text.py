@@ -12,6 +12,10 @@ from decimal import ROUND_CEILING, ROUND_FLOOR, ROUND_HALF_EVEN, Decimal
 NO_BREAK = "\u00a0"
 UNKNOWN = "unknown"
 
+_READ_UNITS = {"degC": "°C", "um": "µm", "μm": "µm"}
+# Only right after a number: "um" alone is a word of other languages.
+_TYPED_UNIT = re.compile(r"(?<=\d)[ \u00a0](degC|um|μm)\b")
+
 _FEWEST_DIGITS = 2
 _MOST_DIGITS = 3
 _WIDTH_DIGITS = 2
@@ -143,6 +147,11 @@ def as_written(text: str) -> str:
         text = text.replace(typed, read)
     text = re.sub(r"\b(?:um|μm)\b", "µm", text)
     return re.sub(r"\bA(?=/(?:min|s|h)\b)", "Å", text)
+
+
+def in_words(text: str) -> str:
+    """Return running text with the signs of units as people read them: "at 80 degC" is "at 80 °C"."""
+    return _TYPED_UNIT.sub(lambda match: NO_BREAK + _READ_UNITS[match[1]], text)
 
 
 def tick_text(value: float, step: float) -> str:

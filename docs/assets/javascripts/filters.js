@@ -7,7 +7,7 @@
   "use strict";
 
   function plain(text) {
-    return text.normalize("NFKD").toLowerCase();
+    return text.normalize("NFKD").toLowerCase().replace(/°/g, "deg");
   }
 
   function fits(row, chosen) {

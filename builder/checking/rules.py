@@ -1,0 +1,29 @@
+"""Every rule across records, by subject; a new module of rules adds its tuple here."""
+
+from __future__ import annotations
+
+from builder.checking import (
+    rules_chemistry,
+    rules_films,
+    rules_published,
+    rules_recipe_tools,
+    rules_recipes,
+    rules_references,
+    rules_runs,
+    rules_samples,
+    rules_tools,
+)
+from builder.checking.rule import Rule
+
+RULES: tuple[Rule, ...] = (
+    *rules_references.RULES,
+    *rules_films.RULES,
+    *rules_chemistry.RULES,
+    *rules_published.RULES,
+    *rules_tools.RULES,
+    *rules_recipes.RULES,
+    *rules_recipe_tools.RULES,
+    *rules_runs.RULES,
+    *rules_samples.RULES,
+)
+"""Run in this order; the problems are sorted by place in the end."""

@@ -1,0 +1,1 @@
+"""What is computed from checked records: plans, safety, upkeep."""

@@ -1,0 +1,246 @@
+"""One etch for one target on one sample: its times, every film's word, and what a reader must know beside."""
+
+from __future__ import annotations
+
+import math
+import re
+from collections.abc import Iterator, Sequence
+
+from builder.engine import (
+    Cut,
+    Rank,
+    Span,
+    Verdict,
+    end_mode,
+    loss,
+    open_by_look,
+    open_by_timer,
+    schedule,
+)
+from builder.engine.plan_rules import GOOD_MARGIN, ISOTROPIC_UNDERCUT, RUN_SPAN
+from builder.findings.plan.couples import couplings
+from builder.findings.plan.evidence import Asked, Etching, Evidence, evidence
+from builder.findings.plan.exposures import Reaching, Timing, cases
+from builder.findings.plan.facts import EtchFacts, GasFact, PlanFacts
+from builder.findings.plan.gather import default_phi
+from builder.findings.plan.judging import PlanCaps, judge, scaled, without_offset, worst_of
+from builder.findings.plan.result import CapCode, FilmRow, NoteCode, Option, Remark, UnstatedCode
+from builder.findings.plan.sample import PlanSample, Stage
+from builder.records.terms import Method, Role, State, Status
+
+
+def plan_option(facts: PlanFacts, etching: Etching, stage: Stage, asked: Asked) -> Option:
+    """Return what one etch does to a sample, whatever its verdict."""
+    known = evidence(facts, etching, stage.target.film, asked)
+    timing = timing_of(facts, etching, stage, known)
+    reach = Reaching(facts, etching, asked, stage, timing)
+    undercut, undercut_look = undercuts(reach)
+    found = cases(reach)
+    couples = couplings(reach, found)
+    caps = (*_plan_caps(reach, known), *couples.plan_caps)
+    plan = PlanCaps(known.rank, caps, undercut, undercut_look)
+    rows = ordered_rows(
+        judge(reach, case, plan, couples.caps.get(case.film.film, ()), couples.lost.get(case.film.film))
+        for case in found
+    )
+    best = Verdict.HOLDS if known.rank.can_hold and not caps else Verdict.BORDERLINE
+    best = best if timing.schedule.known else Verdict.UNMEASURED
+    verdict = worst_of(rows, best)
+    recipe = etching.recipe
+    return Option(
+        recipe=None if recipe is None else recipe.id, etchant=etching.etchant.id, method=reach.method,
+        verdict=verdict, verdict_by_look=worst_of(rows, best, by_look=True),
+        target=stage.target.film, target_rank=known.rank, target_band=known.band, schedule=timing.schedule,
+        mode=end_mode(
+            timing.schedule, holds_by_timer=verdict is Verdict.HOLDS,
+            endpoint=recipe is not None and recipe.endpoint,
+        ),
+        undercut=undercut, rows=rows,
+        notes=tuple(_distinct([*_notes(reach, known), *couples.notes])),
+        unstated=tuple(_distinct(unstated(reach, rows))),
+        proven=recipe is not None and recipe.status is Status.PROVEN and known.rank is Rank.OWN,
+        hazard=etching.etchant.hazard, has_margin=_has_margin(rows),
+        phi=timing.cut.nonuniformity, offset_s=timing.cut.offset_s, overetch=timing.cut.overetch,
+    )  # fmt: skip
+
+
+def timing_of(facts: PlanFacts, etching: Etching, stage: Stage, known: Evidence) -> Timing:
+    """Return the times at which the target clears, with what fixes them."""
+    recipe, target = etching.recipe, stage.target
+    depth = stage.sample.depth_nm
+    left = target.thickness_nm if target.spent_nm is None else target.thickness_nm - target.spent_nm
+    through = depth is None or depth >= left
+    cut = Cut(
+        depth_nm=left if through or depth is None else depth,
+        thickness_nm=left,
+        tolerance=target.tolerance,
+        nonuniformity=phi_of(facts, etching),
+        offset_s=0.0 if recipe is None else recipe.offset_s,
+        overetch=0.0 if recipe is None else recipe.overetch,
+        reaction_s=reaction_of(facts, etching),
+        through=through,
+    )
+    return Timing(known.band, cut, schedule(known.band, cut))
+
+
+def phi_of(facts: PlanFacts, etching: Etching) -> float:
+    """Return the non-uniformity of an etch: the recipe's, else the lab's default for its method."""
+    if etching.recipe is not None:
+        return etching.recipe.phi
+    etchant = etching.etchant
+    return default_phi(facts.defaults, etchant.method, gas_bubbles=etchant.gas_bubbles)
+
+
+def reaction_of(facts: PlanFacts, etching: Etching) -> float:
+    """Return the time from seeing the end to stopping, s."""
+    in_plasma = etching.etchant.state is State.PLASMA
+    return facts.defaults.reaction_plasma_s if in_plasma else facts.defaults.reaction_wet_s
+
+
+def undercuts(reach: Reaching) -> tuple[Span, Span]:
+    """Return the way of one mask edge, nm, by timer and by look; unknown where no ratio is on record."""
+    ratio, timing = _ratio(reach), reach.timing
+    band = scaled(timing.band, ratio)
+    ways = []
+    for exposure in (open_by_timer(timing.schedule), open_by_look(timing.schedule, timing.cut)):
+        etching_time = without_offset(exposure, timing.cut.offset_s)
+        ways.append(loss(band, etching_time, timing.cut.nonuniformity))
+    return ways[0], ways[1]
+
+
+def is_isotropic(reach: Reaching) -> bool:
+    """Tell whether an etch is on record as going sideways as fast as down."""
+    recipe = reach.etching.recipe
+    return reach.etching.etchant.isotropic if recipe is None else recipe.isotropic
+
+
+def _ratio(reach: Reaching) -> Span:
+    recipe = reach.etching.recipe
+    if reach.method is Method.LIFT_OFF:
+        return Span(None, None, None)
+    if recipe is not None and recipe.ratio is not None:
+        return Span(recipe.ratio.low, recipe.ratio.mid, recipe.ratio.high)
+    if is_isotropic(reach):
+        return Span(ISOTROPIC_UNDERCUT, ISOTROPIC_UNDERCUT, ISOTROPIC_UNDERCUT)
+    return Span(None, None, None)
+
+
+def _plan_caps(reach: Reaching, known: Evidence) -> Iterator[Remark]:
+    sample, recipe = reach.stage.sample, reach.etching.recipe
+    if known.conflict and known.single:
+        yield Remark(CapCode.CONFLICT)
+    if sample.through_wafer and sample.carrier is None and not reach.stage.below:
+        yield Remark(CapCode.THROUGH_WAFER)
+    own = None if recipe is None else recipe.own.get(reach.stage.target.film)
+    loads = None if own is None else own.load_cm2
+    if loads is not None and sample.load_cm2 is not None:
+        if not RUN_SPAN[0] * loads.low <= sample.load_cm2 <= RUN_SPAN[1] * loads.high:
+            yield Remark(
+                CapCode.LOAD, {"load_cm2": sample.load_cm2, "low_cm2": loads.low, "high_cm2": loads.high}
+            )
+    elif sample.load_cm2 is None and sample.carrier == reach.stage.target.film and not reach.is_wet:
+        # A carrier of the target's own film eats most of the etchant: no run says how fast the piece goes.
+        yield Remark(CapCode.CARRIER_LOAD, {"film": sample.carrier})
+    if reach.facts.films[reach.stage.target.film].is_family:
+        yield Remark(CapCode.FAMILY)
+
+
+def _notes(reach: Reaching, known: Evidence) -> Iterator[Remark]:
+    recipe, target = reach.etching.recipe, reach.stage.target
+    if recipe is not None:
+        if target.film not in recipe.targets:
+            yield Remark(NoteCode.NOT_A_TARGET, {"film": target.film})
+        if recipe.status is Status.DRAFT:
+            yield Remark(NoteCode.DRAFT)
+        yield from _time_note(reach, recipe)
+    if known.conflict:
+        yield Remark(NoteCode.CONFLICT)
+    if known.far:
+        yield Remark(NoteCode.FAR)
+    if known.all_temperatures:
+        yield Remark(NoteCode.ALL_TEMPERATURES)
+    if is_isotropic(reach) and (recipe is None or recipe.ratio is None) and reach.stage.masks:
+        yield Remark(NoteCode.UNDERCUT_ASSUMED)
+    for fact in gas_facts(reach.etching, reach.stage.sample, reach.facts.bond_words):
+        yield Remark(NoteCode.GAS, {"words": fact.words})
+    for words in (*(recipe.cautions if recipe else ()), *reach.etching.etchant.cautions):
+        yield Remark(NoteCode.HAZARD, {"words": words})
+
+
+def _time_note(reach: Reaching, recipe: EtchFacts) -> Iterator[Remark]:
+    """A time far from those of the runs, where no depth series shows that the rate stays."""
+    own, stop = recipe.own.get(reach.stage.target.film), reach.timing.schedule.latest_stop_s
+    if own is None or stop is None or own.induction_s is not None:
+        return
+    if not RUN_SPAN[0] * own.times.low <= stop <= RUN_SPAN[1] * own.times.high:
+        yield Remark(
+            NoteCode.TIME_OUTSIDE_RUNS, {"stop_s": stop, "low_s": own.times.low, "high_s": own.times.high}
+        )
+
+
+def gas_facts(etching: Etching, sample: PlanSample, bond_words: str) -> list[GasFact]:
+    """Return what the etchant, the films it reaches and the bond do to a person, forbidden ones first."""
+    films = [*sample.layers, *sample.exposed, *([sample.back] if sample.back else [])]
+    facts: list[GasFact] = []
+    for film in films:
+        own = () if etching.recipe is None else etching.recipe.gas.get(film.film, ())
+        facts += [
+            fact
+            for fact in (*own, *etching.etchant.gas.get(film.film, ()))
+            if film.thickness_nm > fact.from_nm or fact.from_nm == 0
+        ]
+    if sample.bond is not None and bond_words and re.search(bond_words, sample.bond, re.IGNORECASE):
+        facts += etching.etchant.bond
+    return sorted(dict.fromkeys(facts), key=lambda fact: (not fact.forbidden, fact.words))
+
+
+def unstated(reach: Reaching, rows: Sequence[FilmRow]) -> Iterator[Remark]:
+    sample = reach.stage.sample
+    if reach.reaches_back and sample.back is None and not sample.back_protected:
+        yield Remark(UnstatedCode.BACK)
+    if reach.is_wet and sample.edge is None and any(row.role is Role.UNDER for row in rows):
+        yield Remark(UnstatedCode.EDGE)
+    for row in rows:
+        for cap in row.caps:
+            if cap.code == CapCode.UNDER_NOBLE:
+                yield Remark(UnstatedCode.UNDER_NOBLE, {"film": cap.params["film"]})
+        if row.allowed_nm is None and not row.assumed:
+            yield Remark(UnstatedCode.ALLOWED, {"film": row.film})
+    if sample.temperature is None and reach.etching.temperature is None:
+        yield Remark(UnstatedCode.TEMPERATURE)
+    if sample.line_nm is None and reach.stage.masks and is_isotropic(reach):
+        yield Remark(UnstatedCode.LINE)
+    if sample.load_cm2 is None and reach.etching.etchant.state is State.PLASMA:
+        yield Remark(UnstatedCode.LOAD)
+    if sample.through_wafer and sample.carrier is None and not reach.stage.below:
+        yield Remark(UnstatedCode.STOP)
+
+
+def ordered_rows(rows: Iterator[FilmRow]) -> tuple[FilmRow, ...]:
+    """Worst first; of the adhesion layers that may lie under one noble metal, only the worst."""
+    ordered = sorted(
+        rows, key=lambda row: (-row.verdict.order, -row.verdict_by_look.order, row.role, row.film, row.thickness_nm)
+    )
+    kept: list[FilmRow] = []
+    noble: set[object] = set()
+    for row in ordered:
+        under = next((cap.params["film"] for cap in row.caps if cap.code == CapCode.UNDER_NOBLE), None)
+        if under is not None and under in noble:
+            continue
+        noble.add(under)
+        kept.append(row)
+    return tuple(kept)
+
+
+def _has_margin(rows: Sequence[FilmRow]) -> bool:
+    """Tell whether every film may lose at least twice what it loses at worst."""
+    return all(
+        row.allowed_nm is not None
+        and row.loss.high is not None
+        and (math.isinf(row.allowed_nm) or row.allowed_nm >= GOOD_MARGIN * row.loss.high)
+        for row in rows
+    )
+
+
+def _distinct(remarks: Iterator[Remark] | Sequence[Remark]) -> list[Remark]:
+    return list({remark.key: remark for remark in remarks}.values())

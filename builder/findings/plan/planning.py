@@ -1,0 +1,210 @@
+"""A whole plan: one stage a target, or the steps of a sequence, each starting where the last one ended."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterable, Sequence
+from dataclasses import dataclass, replace
+
+from builder.engine import Verdict
+from builder.findings.plan.evidence import Asked
+from builder.findings.plan.exposures import ORGANIC
+from builder.findings.plan.facts import MeetingFact, PlanFacts
+from builder.findings.plan.gather import span_of
+from builder.findings.plan.offers import etchant_offer, offers
+from builder.findings.plan.result import (
+    Excluded,
+    ExcludedCode,
+    NoteCode,
+    Option,
+    Plan,
+    Remark,
+    StagePlan,
+)
+from builder.findings.plan.sample import PlanFilm, PlanSample, Stage, stages_of, worn
+from builder.findings.plan.treatment import treatment_option
+from builder.records.samples import ANY_ETCH, SequenceStep
+from builder.records.terms import Role, Treatment
+
+
+@dataclass(frozen=True)
+class _State:
+    """A sample between steps: its films as they are now, and what it was last wet with."""
+
+    sample: PlanSample
+    removed: int
+    wet_with: str | None
+
+
+def plan(
+    facts: PlanFacts,
+    sample: PlanSample,
+    steps: Sequence[SequenceStep] = (),
+    *,
+    confidence: float,
+    etchant: str | None = None,
+) -> Plan:
+    """
+    Return the plan of a sample.
+
+    `confidence` must be one that the facts store. With `etchant`, one option by published facts alone:
+    the facts must then hold no record of a lab (`gather.reference_only`).
+
+    Raises
+    ------
+    KeyError
+        The facts hold no intervals at that confidence, or no such etchant.
+    """
+    asked = Asked(confidence, sample.temperature)
+    if steps and etchant is None:
+        stages = _sequence(facts, sample, steps, asked)
+    else:
+        stages = _targets(facts, sample, asked, etchant)
+    return Plan(sample.name, facts.as_of, confidence, stages, is_sequence=bool(steps) or len(stages) > 1)
+
+
+def _targets(
+    facts: PlanFacts, sample: PlanSample, asked: Asked, etchant: str | None
+) -> tuple[StagePlan, ...]:
+    stages: list[StagePlan] = []
+    state = _State(sample, 0, None)
+    for number in range(len(stages_of(sample))):
+        stage = stages_of(state.sample)[number]
+        planned = _etch_stage(facts, stage, asked, number + 1, None, etchant, state.wet_with)
+        stages.append(planned)
+        state = _after_etch(state, planned)
+    return tuple(stages)
+
+
+def _sequence(
+    facts: PlanFacts, sample: PlanSample, steps: Sequence[SequenceStep], asked: Asked
+) -> tuple[StagePlan, ...]:
+    stages: list[StagePlan] = []
+    state = _State(sample, 0, None)
+    for number, step in enumerate(steps, start=1):
+        here = asked if step.temperature is None else Asked(asked.confidence, span_of(step.temperature))
+        if step.treat is not None:
+            planned = _treat_stage(facts, state, step, here, number)
+            state = _after_treatment(facts, state, planned, step)
+        else:
+            only = None if step.etch in (None, ANY_ETCH) else step.etch
+            stage = stages_of(state.sample)[state.removed]
+            planned = _etch_stage(facts, stage, here, number, only, None, state.wet_with)
+            state = _after_etch(state, planned)
+        stages.append(planned)
+    return tuple(stages)
+
+
+def _etch_stage(
+    facts: PlanFacts,
+    stage: Stage,
+    asked: Asked,
+    number: int,
+    only: str | None,
+    etchant: str | None,
+    wet_with: str | None,
+) -> StagePlan:
+    if etchant is not None:
+        options: tuple[Option, ...] = (etchant_offer(facts, stage, asked, etchant),)
+        excluded: tuple[Excluded, ...] = ()
+    else:
+        options, excluded = offers(facts, stage, asked, only)
+    options, clashing = _without_clashes(facts, options, wet_with)
+    return StagePlan(number, stage.target.film, None, None, options, (*excluded, *clashing))
+
+
+def _treat_stage(
+    facts: PlanFacts, state: _State, step: SequenceStep, asked: Asked, number: int
+) -> StagePlan:
+    assert step.treat is not None
+    if step.etchant is None:
+        return StagePlan(number, None, str(step.treat), None, (), ())
+    time_s = None if step.time is None else step.time.number
+    option = treatment_option(facts, state.sample, state.removed, step.treat, step.etchant, time_s, asked)
+    options, clashing = _without_clashes(facts, (option,), state.wet_with)
+    return StagePlan(number, None, str(step.treat), step.etchant, options, clashing)
+
+
+def _without_clashes(
+    facts: PlanFacts, options: Iterable[Option], wet_with: str | None
+) -> tuple[tuple[Option, ...], tuple[Excluded, ...]]:
+    """Take out what must not meet the liquid that the sample comes from, and caution against the rest."""
+    kept: list[Option] = []
+    excluded: list[Excluded] = []
+    for option in options:
+        met = [fact for fact in facts.meetings if (fact.first, fact.second) == (wet_with, option.etchant)]
+        if any(fact.forbidden for fact in met):
+            words = "; ".join(fact.words for fact in met if fact.forbidden)
+            reason = Remark(ExcludedCode.SAFETY, {"words": words})
+            excluded.append(Excluded(option.recipe, option.etchant, reason))
+        else:
+            kept.append(replace(option, notes=(*option.notes, *map(_meeting_note, met))))
+    return tuple(kept), tuple(excluded)
+
+
+def _meeting_note(fact: MeetingFact) -> Remark:
+    return Remark(NoteCode.MEETING, {"words": fact.words})
+
+
+def _after_etch(state: _State, stage: StagePlan) -> _State:
+    """The films as the best option leaves them: each with its worst loss."""
+    option = stage.options[0] if stage.options else None
+    # An etch ends with its own rinse; what it was etched with is no longer on the sample.
+    return _State(_worn_sample(state.sample, option), state.removed + 1, None)
+
+
+def _after_treatment(facts: PlanFacts, state: _State, stage: StagePlan, step: SequenceStep) -> _State:
+    is_rinse = step.treat is Treatment.RINSE
+    wet_with = None if is_rinse else step.etchant or state.wet_with
+    if stage.etchant is None:
+        return replace(state, wet_with=wet_with)
+    option = stage.options[0] if stage.options else None
+    after = _worn_sample(state.sample, option)
+    if step.treat is Treatment.STRIP:
+        after = _stripped(facts, after)
+    return _State(after, state.removed, wet_with)
+
+
+def _stripped(facts: PlanFacts, sample: PlanSample) -> PlanSample:
+    """A strip leaves no resist."""
+    layers = tuple(
+        film
+        for film in sample.layers
+        if film.role is not Role.MASK or facts.films[film.film].family not in ORGANIC
+    )
+    return replace(sample, layers=layers)
+
+
+def _worn_sample(sample: PlanSample, option: Option | None) -> PlanSample:
+    def after(film: PlanFilm) -> PlanFilm:
+        if option is None:
+            return worn(film, None)
+        losses = [
+            row.loss.high
+            for row in option.rows
+            if row.film == film.film and row.role == film.role and row.thickness_nm == film.thickness_nm
+        ]
+        if not losses:
+            return film
+        if film.may_vanish and None in losses:
+            return worn(film, math.inf)
+        return worn(film, None if None in losses else max(loss for loss in losses if loss is not None))
+
+    return replace(
+        sample,
+        layers=tuple(map(after, sample.layers)),
+        exposed=tuple(map(after, sample.exposed)),
+        back=None if sample.back is None else after(sample.back),
+    )
+
+
+def verdict_of(planned: Plan) -> Verdict:
+    """Return the worst word among the best options of all stages; unmeasured where a stage has none."""
+    words = [
+        stage.options[0].verdict if stage.options else Verdict.UNMEASURED
+        for stage in planned.stages
+        if stage.treat is None or stage.etchant is not None
+    ]
+    return max(words, key=lambda word: word.order, default=Verdict.UNMEASURED)
+
+

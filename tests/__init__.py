@@ -1,0 +1,1 @@
+"""The tests; each folder mirrors a package of the program, `site` looks at the built pages in a browser."""

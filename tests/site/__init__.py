@@ -1,0 +1,1 @@
+"""The shipped records' built site, seen in a real browser."""

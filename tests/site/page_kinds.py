@@ -1,0 +1,39 @@
+"""One page of each kind, and the largest of the kinds that records make long."""
+
+from __future__ import annotations
+
+from pathlib import Path
+
+PAGES = {
+    "home": "index.html",
+    "recipe list": "recipes/index.html",
+    "recipe": "recipes/oxide-bhf.html",
+    "recipe, many runs": "recipes/oxide-hf-vapour.html",
+    "recipe, retired": "recipes/aluminium-open-beaker.html",
+    "film list": "films/index.html",
+    "film": "films/sio2-thermal-wet.html",
+    "film family": "films/sio2-any.html",
+    "etchant list": "etchants/index.html",
+    "etchant": "etchants/piranha.html",
+    "chemical list": "chemicals/index.html",
+    "chemical": "chemicals/hf-49.html",
+    "tool list": "tools/index.html",
+    "tool": "tools/hf-bench.html",
+    "bibliography": "bibliography.html",
+    "start": "start.html",
+    "reading": "reading.html",
+    "glossary": "glossary.html",
+    "method note": "methods/rates.html",
+}
+
+
+def kind_of(url: str) -> str:
+    """Return what pages made alike have in common: their folder, and whether they are its list."""
+    path = Path(url)
+    folder = path.parent.as_posix()
+    return path.as_posix() if folder == "." else f"{folder}/{'list' if path.stem == 'index' else 'record'}"
+
+
+def kinds_of_site(folder: Path) -> set[str]:
+    """Return the kinds of all pages of a built site."""
+    return {kind_of(path.relative_to(folder).as_posix()) for path in folder.rglob("*.html")}

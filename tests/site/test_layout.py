@@ -1,0 +1,44 @@
+"""Pages fit narrow windows and large letters; nothing but a table's own box scrolls sideways."""
+
+from __future__ import annotations
+
+import pytest
+
+from tests.browser import Open
+from tests.site.page_kinds import PAGES
+
+# Window in CSS pixels: a phone; 1280 px at 200 %; 1280 px at 400 % (WCAG 2.2, 1.4.10 Reflow); a tablet.
+_WINDOWS = {"phone": (360, 780), "zoom 200 %": (640, 450), "zoom 400 %": (320, 256), "tablet": (820, 1180)}
+_TOO_WIDE = """() => {
+  const wide = document.documentElement.clientWidth;
+  const inBox = (element) => element.closest('.ew-rows, .ew-formula, .ew-figure, .md-typeset__scrollwrap');
+  const unseen = (element) => !element.getClientRects().length
+    || element.closest('svg, .ew-said, .headerlink');
+  return [document.documentElement.scrollWidth > wide, ...[...document.querySelectorAll('article *')]
+    .filter((element) => !inBox(element) && !unseen(element)
+      && element.getBoundingClientRect().right > wide + 1)
+    .slice(0, 3).map((element) => element.outerHTML.slice(0, 120))];
+}"""
+
+
+@pytest.mark.parametrize("kind", PAGES)
+def test_nothing_is_wider_than_the_window(open_page: Open, http_root: str, kind: str) -> None:
+    """At every window the page itself never scrolls sideways, and no text leaves it."""
+    page = open_page(http_root + PAGES[kind]).page
+    found = {}
+    for name, (width, height) in _WINDOWS.items():
+        page.set_viewport_size({"width": width, "height": height})
+        found[name] = page.evaluate(_TOO_WIDE)
+    assert found == {name: [False] for name in _WINDOWS}
+
+
+def test_large_letters_are_not_cut(open_page: Open, http_root: str) -> None:
+    """With letters of double size (text only) the first paragraph and the safety strip stay whole."""
+    page = open_page(http_root + PAGES["recipe"]).page
+    before = page.locator(".ew-lead").bounding_box()
+    page.add_style_tag(content="html { font-size: 250% !important; }")
+    after = page.locator(".ew-lead").bounding_box()
+    assert before is not None and after is not None and after["height"] > 1.5 * before["height"]
+    assert page.evaluate(_TOO_WIDE) == [False]
+    cut = "(e) => e.scrollHeight > e.clientHeight + 1 || e.scrollWidth > e.clientWidth + 1"
+    assert not page.locator(".ew-caution").evaluate(cut)
