@@ -140,7 +140,7 @@ def _film_rows(
         session.log_deviation + _SHARED * recipe.spread * normal.draw() + film.log_shift + log_rate_shift
     )
     rate_nm_per_s = film.rate_nm_per_min / 60 * math.exp(log_deviation)
-    u_nm = film.coarse_u_nm if film.coarse_u_nm is not None and session.number % 3 == 2 else film.u_nm  # noqa: PLR2004
+    u_nm = film.coarse_u_nm if film.coarse_u_nm is not None and session.number % 3 == 2 else film.u_nm
     thickness_nm = film.thickness_nm * (1 + 0.006 * normal.draw())
     before_nm = thickness_nm + u_nm * normal.draw()
     for time_s in film.times_s:
@@ -160,7 +160,7 @@ def _lot(film: FilmRuns, session: int) -> tuple[str, float, str]:
     return lot, shift, "new film lot" if session in film.lot_changes else ""
 
 
-def _row(  # noqa: PLR0913 one argument a source of a cell
+def _row(
     recipe: RecipeRuns,
     session: _Session,
     film: FilmRuns,

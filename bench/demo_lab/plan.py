@@ -83,6 +83,6 @@ class RecipeRuns:
 
 
 def is_plain(recipe: RecipeRuns, film: FilmRuns) -> bool:
-    """Tell whether the stated rate is the true centre of all these runs: no drift, shift, lot change or series."""
+    """Tell whether the stated rate is the centre of all these runs: no drift, shift, lot change or series."""
     shifted = recipe.drift or film.log_shift or any(event.log_shift for event in recipe.events.values())
     return film.rate_nm_per_min > 0 and not shifted and not film.lot_changes and len(film.times_s) == 1

@@ -57,15 +57,6 @@ def _percent(low: float, high: float) -> str:
     return f"{ends[0]} %" if ends[0] == ends[1] else f"{ends[0]} to {ends[1]} %"
 
 
-def _repeated_parts(checked: Checked) -> Iterator[Fault]:
-    for record in _mixtures(checked):
-        names = [part.chemical for part in record.parts]
-        for index, part in enumerate(record.parts):
-            is_same = part.amount in [other.amount for other in record.parts[:index]]
-            if is_same and part.chemical in names[:index]:
-                yield Fault(record.file, f"/parts/{index}", f'"{part.chemical}" is listed twice')
-
-
 def _no_parts(checked: Checked) -> Iterator[Fault]:
     for etchant in checked.records.etchants.values():
         if not etchant.parts and etchant.parts_unknown is None and "parts" not in etchant.pending:
@@ -84,7 +75,6 @@ def _own_parts(checked: Checked) -> Iterator[Fault]:
 
 RULES: tuple[Rule, ...] = (
     Rule("parts-sum", _parts_sum),
-    Rule("repeated-part", _repeated_parts),
     Rule("no-parts", _no_parts),
     Rule("part-of-itself", _own_parts),
 )

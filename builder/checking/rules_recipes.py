@@ -34,15 +34,23 @@ def _no_evidence(checked: Checked) -> Iterator[Fault]:
         if etch.status is Status.RETIRED or _may_hide_evidence(checked, etch):
             continue
         for index, film in enumerate(etch.targets):
-            if film in checked.records.films and not _has_evidence(checked, etch, film):
+            record = checked.records.films.get(film)
+            if record is not None and not record.is_family and not _has_evidence(checked, etch, film):
                 words = f'nothing is known of "{film}" in this etch: no run, no published rate, no statement'
                 hint = f"add runs to recipes/runs/{etch.id}.csv, or take it from the targets"
                 yield Fault(etch.file, f"/targets/{index}", words, hint)
 
 
 def _may_hide_evidence(checked: Checked, etch: Etch) -> bool:
+    """Tell whether a fault that is reported elsewhere may be why no evidence is seen."""
+    if etch.etchant not in checked.records.etchants or _has_unknown_film(checked, etch):
+        return True
     lists = (("runs", etch.id), ("rates", etch.etchant), ("compatibility", etch.etchant))
     return any(checked.is_broken(kind, name) for kind, name in lists)
+
+
+def _has_unknown_film(checked: Checked, etch: Etch) -> bool:
+    return any(run.film not in checked.records.films for run in checked.records.runs.get(etch.id, ()))
 
 
 def _has_evidence(checked: Checked, etch: Etch, film: str) -> bool:
@@ -60,7 +68,7 @@ def _has_evidence(checked: Checked, etch: Etch, film: str) -> bool:
 def _unproven(checked: Checked) -> Iterator[Fault]:
     for etch in checked.records.etches.values():
         runs = checked.records.runs.get(etch.id, ())
-        is_known = not checked.is_broken("runs", etch.id)
+        is_known = not checked.is_broken("runs", etch.id) and not _has_unknown_film(checked, etch)
         if etch.status is Status.PROVEN and is_known and not any(run.film in etch.targets for run in runs):
             hint = f'add runs to recipes/runs/{etch.id}.csv, or set "status: draft"'
             yield Fault(etch.file, "/status", "proven, but no run of a target is on record", hint)

@@ -35,7 +35,7 @@ THICK_ORGANIC_NM = 3000.0
 ORGANIC_MASS = "thick photoresist or organic mass"
 """The words of the rule for organic mass in piranha."""
 _ORGANIC_FAMILIES = frozenset({FilmFamily.RESIST, FilmFamily.POLYMER})
-_BOND_WORDS = re.compile(r"\b(wax|tape|adhesive|glue|grease|resist|thermoplastic)\w*\b", re.IGNORECASE)
+BOND_WORDS = re.compile(r"\b(wax|tape|adhesive|glue|grease|resist|thermoplastic)\w*\b", re.IGNORECASE)
 WATER = "water"
 CARRIED_OVER = ", carried over without a rinse"
 
@@ -65,14 +65,22 @@ def film_gas(
     etchant = etchant_presence(records, etchant_id)
     found: list[SafetyFinding] = []
     for film_id in dict.fromkeys(films):
-        film = film_presence(records, film_id)
-        met = gravest(meetings(records, etchant, film))
-        found += [of_meeting("film-meets-etchant", meeting) for meeting in met]
-        if not met:
-            found += _unknown_hydride(records, etchant, film_id)
-        if _is_organic_mass(records, film_id, (thickness_nm or {}).get(film_id)):
-            mass = words_presence(ORGANIC_MASS, f"{film.name}, thicker than {THICK_ORGANIC_NM / 1000:g} µm")
-            found += [of_meeting("thick-organic", meeting) for meeting in meetings(records, etchant, mass)]
+        found += gas_of_film(records, etchant, film_id, (thickness_nm or {}).get(film_id))
+    return without_repeats(found)
+
+
+def gas_of_film(
+    records: LabRecords, etchant: Presence, film_id: str, thickness_nm: float | None = None
+) -> tuple[SafetyFinding, ...]:
+    """Return what an etchant and one film do to a person; resist is organic mass from a thickness on."""
+    film = film_presence(records, film_id)
+    met = gravest(meetings(records, etchant, film))
+    found = [of_meeting("film-meets-etchant", meeting) for meeting in met]
+    if not met:
+        found += _unknown_hydride(records, etchant, film_id)
+    if _is_organic_mass(records, film_id, thickness_nm):
+        mass = words_presence(ORGANIC_MASS, f"{film.name}, thicker than {THICK_ORGANIC_NM / 1000:g} µm")
+        found += [of_meeting("thick-organic", meeting) for meeting in meetings(records, etchant, mass)]
     return without_repeats(found)
 
 
@@ -94,7 +102,7 @@ def _unknown_hydride(records: LabRecords, etchant: Presence, film_id: str) -> It
 
 def bond_findings(records: LabRecords, etchant_id: str, bond: str | None) -> tuple[SafetyFinding, ...]:
     """Return what the wax, tape or grease that holds a sample does in an etchant; words are all we have."""
-    if bond is None or not _BOND_WORDS.search(bond):
+    if bond is None or not BOND_WORDS.search(bond):
         return ()
     mass = words_presence(ORGANIC_MASS, f'what holds the sample ("{bond}")')
     met = meetings(records, etchant_presence(records, etchant_id), mass)

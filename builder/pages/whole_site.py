@@ -15,6 +15,14 @@ from builder.views.film_page import film_page
 from builder.views.home_page import home_page
 from builder.views.recipe_page import recipe_page
 from builder.views.record_lists import chemical_list, etchant_list, film_list, recipe_list, tool_list
+from builder.views.safety_container_matrix import container_matrix
+from builder.views.safety_film_matrix import film_matrix
+from builder.views.safety_first_etch import first_etch_page
+from builder.views.safety_hf import hydrofluoric_page
+from builder.views.safety_mixing_matrix import chemical_matrix, group_matrix
+from builder.views.safety_overview import overview_page
+from builder.views.safety_plasma import plasma_page
+from builder.views.safety_sheet import bench_sheet
 from builder.views.tool_page import tool_page
 
 INVENTED_NOTICE = (
@@ -49,3 +57,15 @@ def _pages(records: LabRecords, today: date) -> Iterator[Page]:
         yield render_page("chemical", chemical_page(records, chemical))
     for tool in records.tools.values():
         yield render_page("tool", tool_page(records, tool))
+    yield from _safety_pages(records)
+
+
+def _safety_pages(records: LabRecords) -> Iterator[Page]:
+    yield render_page("safety_overview", overview_page(records))
+    yield render_page("safety_hf", hydrofluoric_page(records))
+    yield render_page("safety_plasma", plasma_page(records))
+    yield render_page("safety_first_etch", first_etch_page(records))
+    for view in (chemical_matrix, group_matrix, film_matrix, container_matrix):
+        yield render_page("safety_matrix", view(records))
+    for chemical in records.chemicals.values():
+        yield render_page("safety_sheet", bench_sheet(records, chemical))

@@ -17,6 +17,8 @@ from builder.views.published_rows import (
 )
 from builder.views.recipe_rows import RecipeRow, recipe_rows
 from builder.views.references import Citation, Fact, chemical_link, citations, etchant_link, known_facts
+from builder.views.safety_strip import SafetyStrip, etchant_strip
+from builder.views.safety_tables import SafetyTables, etchant_tables
 from builder.views.words import METHOD_NAMES, yes_no_unknown
 
 
@@ -40,9 +42,8 @@ class EtchantPage:
     facts: tuple[Fact, ...]
     parts: tuple[PartRow, ...]
     parts_unknown: str | None
-    handling: tuple[Fact, ...]
-    never_capped: bool
-    hazard_words: tuple[str, ...]
+    safety: SafetyStrip
+    tables: SafetyTables
     pending: tuple[str, ...]
     note: str | None
     citations: tuple[Citation, ...]
@@ -67,9 +68,8 @@ def etchant_page(records: LabRecords, etchant: Etchant) -> EtchantPage:
         facts=_facts(records, etchant),
         parts=tuple(PartRow(part.amount, chemical_link(records, part.chemical)) for part in etchant.parts),
         parts_unknown=etchant.parts_unknown,
-        handling=_handling(etchant),
-        never_capped=_never_capped(records, etchant),
-        hazard_words=hazard_words(records, etchant),
+        safety=etchant_strip(records, etchant),
+        tables=etchant_tables(records, etchant.id),
         pending=etchant.pending,
         note=etchant.note,
         citations=citations(records, sources, etchant.trust or (mixture.trust if mixture else None)),
@@ -102,23 +102,3 @@ def _facts(records: LabRecords, etchant: Etchant) -> tuple[Fact, ...]:
     if etchant.variants_of is None:
         return facts
     return (*facts, Fact("A strength of", "", (etchant_link(records, etchant.variants_of),)))
-
-
-def _handling(etchant: Etchant) -> tuple[Fact, ...]:
-    mixture = etchant.mixture
-    if mixture is None:
-        return ()
-    return known_facts(
-        ("Used for", mixture.use),
-        ("Order of mixing", mixture.order_of_mixing),
-        ("Hazards", mixture.hazards),
-        ("Pot life", mixture.pot_life),
-        ("Container", mixture.container),
-        ("How this is known", mixture.trust_note),
-    )
-
-
-def _never_capped(records: LabRecords, etchant: Etchant) -> bool:
-    parts = [records.chemicals[part.chemical] for part in etchant.parts]
-    own = etchant.mixture is not None and etchant.mixture.never_capped is True
-    return own or any(chemical.never_capped for chemical in parts)

@@ -11,7 +11,7 @@ from builder.records.terms import PublishedConditions
 from builder.views.etchant_page import hazard_words
 from builder.views.link import Link
 from builder.views.number_text import as_recorded, as_written
-from builder.views.references import Fact, FilmRef, chemical_link, film_ref, known_facts
+from builder.views.references import Fact, FilmRef, film_ref, known_facts, substance_link
 from builder.views.words import AFTER_STEP_NAMES, BATH_NAMES, yes_no_unknown
 
 
@@ -157,7 +157,7 @@ def _after(records: LabRecords, step: AfterStep) -> AfterRow:
     return AfterRow(
         kind=AFTER_STEP_NAMES[step.kind],
         what=step.what,
-        chemical=None if step.chemical is None else chemical_link(records, step.chemical),
+        chemical=None if step.chemical is None else substance_link(records, step.chemical),
         within="" if step.within is None else shown(step.within),
         note=step.note or "",
     )

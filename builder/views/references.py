@@ -60,6 +60,13 @@ def chemical_link(records: LabRecords, chemical_id: str) -> Link:
     return Link(records.chemicals[chemical_id].name, page_url(PageKind.CHEMICAL, chemical_id))
 
 
+def substance_link(records: LabRecords, substance_id: str) -> Link:
+    """Return the link to what an id names: a chemical if there is one, else an etchant."""
+    if substance_id in records.chemicals:
+        return chemical_link(records, substance_id)
+    return etchant_link(records, substance_id)
+
+
 def tool_link(records: LabRecords, tool_id: str) -> Link:
     """Return the link to a tool's page."""
     return Link(records.tools[tool_id].name, page_url(PageKind.TOOL, tool_id))

@@ -9,8 +9,7 @@ from builder.records.mixing_match import HF_PRECAUTION, holds_hydrofluoric_acid
 from builder.records.published import Statement
 from builder.records.terms import Effect, FilmFamily
 from builder.views.link import Link
-from builder.views.references import Fact, chemical_link, etchant_link, film_link
-from builder.views.references import Citation, citation
+from builder.views.references import Citation, Fact, chemical_link, citation, etchant_link, film_link
 from builder.views.safety_sheet import sheet_url
 from builder.views.safety_strip import PrecautionBlock, contacts, precaution_block
 
@@ -64,8 +63,7 @@ def hydrofluoric_page(records: LabRecords) -> HydrofluoricPage:
             _resist(records, statement)
             for one in sorted(etchants, key=lambda one: one.id)
             for statement in records.statements.get(one.id, ())
-            if statement.effect in _HARMING
-            and records.films[statement.film].family is FilmFamily.RESIST
+            if statement.effect in _HARMING and records.films[statement.film].family is FilmFamily.RESIST
         ),
     )
 
@@ -83,6 +81,6 @@ def _resist(records: LabRecords, statement: Statement) -> ResistRow:
     return ResistRow(
         etchant=etchant_link(records, statement.etchant),
         film=film_link(records, statement.film),
-        words=statement.words if hasattr(statement, "words") else statement.effect.value,
+        words=statement.words,
         citation=citation(records, statement),
     )

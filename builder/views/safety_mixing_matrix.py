@@ -11,11 +11,10 @@ from builder.records.mixing_match import handle_of, pairs_of_chemicals
 from builder.records.safety import MixingRule
 from builder.records.terms import SideKind
 from builder.views.link import Link
-from builder.views.words import TRUST_NAMES
 from builder.views.safety_matrix import (
-    Evidence,
     MIXING_LEGEND,
     SELF,
+    Evidence,
     MatrixPage,
     Row,
     chemical_head,
@@ -23,6 +22,7 @@ from builder.views.safety_matrix import (
     other_pages,
     rule_evidence,
 )
+from builder.views.words import TRUST_NAMES
 
 _ORDER = (
     "acidic-fluoride",
@@ -97,9 +97,10 @@ def group_matrix(records: LabRecords) -> MatrixPage:
 
 def _group(records: LabRecords, name: str) -> Evidence:
     group = records.groups[name]
-    members = [side.name for side in map(partial(_member, records), group.members) if side is not None]
+    members = [one.name for one in map(partial(_member, records), group.members) if one is not None]
+    named = f"Members: {', '.join(members)}." if members else "No member on record."
     trust = "" if group.trust is None else f"Who belongs to it: {TRUST_NAMES[group.trust]}."
-    lines = (group.description, f"Members: {', '.join(members)}." if members else "No member on record.", trust)
+    lines = (group.description, named, trust)
     return Evidence(f"group-{name}", group.name, "", "self", tuple(line for line in lines if line), ())
 
 

@@ -1,4 +1,4 @@
-"""Good and bad records are files: each bad one breaks exactly the rule it is named after, each good one none."""
+"""Good and bad records are files: a bad one breaks exactly the rule it is named after, a good one none."""
 
 from __future__ import annotations
 

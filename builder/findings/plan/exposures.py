@@ -151,10 +151,7 @@ def _masks(reach: Reaching) -> Iterator[Case]:
     order = [film for film in reversed(reach.stage.above) if film.role is Role.MASK]
     for place, mask in enumerate(order):
         lies_on = order[place + 1].film if place + 1 < len(order) else reach.stage.target.film
-        caps: tuple[Remark, ...] = ()
-        if reach.is_porous(mask.film):
-            caps = (Remark(CapCode.BARRIER, {"film": mask.film, "under": lies_on}),)
-        yield Case(mask, Role.MASK, timer, look, lies_on=lies_on, caps=caps)
+        yield Case(mask, Role.MASK, timer, look, lies_on=lies_on)
         timer, look = _beneath(reach, mask, timer, look)
         if place + 1 < len(order) or not reach.film(mask.film).noble:
             continue
@@ -195,11 +192,13 @@ def _under(reach: Reaching) -> Iterator[Case]:
 def _exposed(reach: Reaching) -> Iterator[Case]:
     """Films anywhere else in reach, with what lies under them where the etch gets there."""
     timer, look = reach.from_start
-    in_stack = {film.film for film in reach.stage.sample.layers}
-    for film in reach.stage.sample.exposed:
+    sample = reach.stage.sample
+    named = {film.film for film in (*sample.layers, *sample.exposed)}
+    in_stack = {film.film for film in sample.layers}
+    for film in sample.exposed:
         faces = TWO_FACES if film.exposed is Reach.BOTH_FACES else 1.0
         yield Case(film, Role.EXPOSED, timer, look, faces, lies_on=film.on)
-        if film.on is not None and not film.nothing_under and film.on not in in_stack:
+        if film.on is not None and not film.nothing_under and film.on not in named:
             # The film that a pad stands on: its edge is open all round the pad.
             yield _thin_case(reach, film.on, ())
         elif film.on in in_stack and film.on is not None and reach.is_porous(film.film):

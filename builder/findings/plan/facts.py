@@ -103,7 +103,7 @@ class GasFact:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class EtchantFacts:
-    """One etchant, with all that is published of films in it."""
+    """One etchant, with all that is published of films in it; `alone` counts where no recipe is named."""
 
     id: str
     name: str
@@ -118,6 +118,7 @@ class EtchantFacts:
     rows: Mapping[str, tuple[PublishedFact, ...]] = field(default_factory=dict)
     said: Mapping[str, tuple[SaidFact, ...]] = field(default_factory=dict)
     gas: Mapping[str, tuple[GasFact, ...]] = field(default_factory=dict)
+    alone: Mapping[str, tuple[GasFact, ...]] = field(default_factory=dict)
     bond: tuple[GasFact, ...] = ()
 
 
@@ -145,8 +146,7 @@ class EtchFacts:
     """
     One recipe.
 
-    `inherits`: published numbers of its etchant count for it. `refused` holds, by film, why the tool
-    does not take it. `temperature` None is not stated.
+    `inherits`: published numbers of its etchant count for it. `temperature` None is not stated.
     """
 
     id: str
@@ -167,7 +167,6 @@ class EtchFacts:
     cycle_s: float | None = None
     ratio: RatioFact | None = None
     masks: tuple[MaskFact, ...] = ()
-    refused: Mapping[str, str] = field(default_factory=dict)
     own: Mapping[str, OwnFact] = field(default_factory=dict)
     gas: Mapping[str, tuple[GasFact, ...]] = field(default_factory=dict)
     forbidden: tuple[str, ...] = ()
@@ -207,12 +206,16 @@ class CoupleFact:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class MeetingFact:
-    """Two etchants that must not follow each other on a sample without a rinse between."""
+    """
+    One rule on etchants that must not follow each other without a rinse between.
 
-    first: str
-    second: str
+    `pairs` are (first, second) etchants; `words` say what happens when they meet.
+    """
+
+    rule: str
     forbidden: bool
     words: str
+    pairs: tuple[tuple[str, ...], ...]
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -233,7 +236,11 @@ class Defaults:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class PlanFacts:
-    """Everything a plan needs; by id, except couples and meetings; `bond_words` is a pattern."""
+    """
+    Everything a plan needs; by id, except couples and meetings.
+
+    `refused` tells, by tool and film, why the tool does not take the film. `bond_words` is a pattern.
+    """
 
     format: int
     as_of: str
@@ -241,6 +248,7 @@ class PlanFacts:
     films: Mapping[str, FilmFacts]
     etchants: Mapping[str, EtchantFacts]
     etches: Mapping[str, EtchFacts]
+    refused: Mapping[str, Mapping[str, str]] = field(default_factory=dict)
     couples: tuple[CoupleFact, ...] = ()
     meetings: tuple[MeetingFact, ...] = ()
     bond_words: str = ""

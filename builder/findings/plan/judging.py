@@ -199,11 +199,15 @@ def _adhesion_caps(reach: Reaching, case: Case) -> list[Remark]:
         if mask.film == case.film.film and case.lies_on in mask.on
     ]
     on = case.lies_on or ""
-    if not held:
-        return [Remark(CapCode.ADHESION, {"on": on})]
-    if stop_s is None or max(held) < stop_s:
-        return [Remark(CapCode.ADHESION_TIME, {"on": on, "held_s": max(held), "stop_s": stop_s})]
-    return []
+    if held and stop_s is not None and max(held) >= stop_s:
+        return []
+    caps = [Remark(CapCode.ADHESION, {"on": on})]
+    if held:
+        caps = [Remark(CapCode.ADHESION_TIME, {"on": on, "held_s": max(held), "stop_s": stop_s})]
+    # A mask that was seen to protect so long has shown that it lets nothing through.
+    if reach.is_porous(case.film.film):
+        caps.append(Remark(CapCode.BARRIER, {"film": case.film.film, "under": on}))
+    return caps
 
 
 def _line_caps(reach: Reaching, undercut: Span) -> list[Remark]:

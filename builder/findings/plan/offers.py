@@ -77,8 +77,9 @@ def _other_reasons(
     if recipe.status is Status.RETIRED:
         yield Remark(ExcludedCode.RETIRED)
     for film in [*sample.layers, *sample.exposed, *([sample.back] if sample.back else [])]:
-        if film.film in recipe.refused:
-            yield Remark(ExcludedCode.TOOL_REFUSES, {"film": film.film, "words": recipe.refused[film.film]})
+        words = facts.refused[recipe.tool].get(film.film)
+        if words is not None:
+            yield Remark(ExcludedCode.TOOL_REFUSES, {"film": film.film, "words": words})
     if sample.methods and str(recipe.method) not in sample.methods:
         yield Remark(ExcludedCode.METHOD, {"method": str(recipe.method)})
     if sample.tools and recipe.tool not in sample.tools:

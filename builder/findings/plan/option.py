@@ -19,10 +19,10 @@ from builder.engine import (
 )
 from builder.engine.plan_rules import GOOD_MARGIN, ISOTROPIC_UNDERCUT, RUN_SPAN
 from builder.findings.plan.couples import couplings
+from builder.findings.plan.defaults import default_phi
 from builder.findings.plan.evidence import Asked, Etching, Evidence, evidence
 from builder.findings.plan.exposures import Reaching, Timing, cases
 from builder.findings.plan.facts import EtchFacts, GasFact, PlanFacts
-from builder.findings.plan.gather import default_phi
 from builder.findings.plan.judging import PlanCaps, judge, scaled, without_offset, worst_of
 from builder.findings.plan.result import CapCode, FilmRow, NoteCode, Option, Remark, UnstatedCode
 from builder.findings.plan.sample import PlanSample, Stage
@@ -183,7 +183,7 @@ def gas_facts(etching: Etching, sample: PlanSample, bond_words: str) -> list[Gas
     films = [*sample.layers, *sample.exposed, *([sample.back] if sample.back else [])]
     facts: list[GasFact] = []
     for film in films:
-        own = () if etching.recipe is None else etching.recipe.gas.get(film.film, ())
+        own = (etching.recipe.gas if etching.recipe else etching.etchant.alone).get(film.film, ())
         facts += [
             fact
             for fact in (*own, *etching.etchant.gas.get(film.film, ()))

@@ -10,7 +10,7 @@ from builder.engine import Verdict
 from builder.findings.plan.evidence import Asked
 from builder.findings.plan.exposures import ORGANIC
 from builder.findings.plan.facts import MeetingFact, PlanFacts
-from builder.findings.plan.gather import span_of
+from builder.findings.plan.gather_etchants import span_of
 from builder.findings.plan.offers import etchant_offer, offers
 from builder.findings.plan.result import (
     Excluded,
@@ -132,18 +132,23 @@ def _without_clashes(
     kept: list[Option] = []
     excluded: list[Excluded] = []
     for option in options:
-        met = [fact for fact in facts.meetings if (fact.first, fact.second) == (wet_with, option.etchant)]
-        if any(fact.forbidden for fact in met):
-            words = "; ".join(fact.words for fact in met if fact.forbidden)
-            reason = Remark(ExcludedCode.SAFETY, {"words": words})
+        met = _met(facts, wet_with, option.etchant)
+        params = [{"first": wet_with, "second": option.etchant, "words": fact.words} for fact in met]
+        forbidden = [values for fact, values in zip(met, params, strict=True) if fact.forbidden]
+        if forbidden:
+            reason = Remark(ExcludedCode.MEETING, forbidden[0])
             excluded.append(Excluded(option.recipe, option.etchant, reason))
         else:
-            kept.append(replace(option, notes=(*option.notes, *map(_meeting_note, met))))
+            notes = [Remark(NoteCode.MEETING, values) for values in params]
+            kept.append(replace(option, notes=(*option.notes, *notes)))
     return tuple(kept), tuple(excluded)
 
 
-def _meeting_note(fact: MeetingFact) -> Remark:
-    return Remark(NoteCode.MEETING, {"words": fact.words})
+def _met(facts: PlanFacts, first: str | None, second: str) -> list[MeetingFact]:
+    """Rules on an etchant that meets what is left of another; the same one twice is no meeting."""
+    if first is None or first == second:
+        return []
+    return [fact for fact in facts.meetings if (first, second) in fact.pairs]
 
 
 def _after_etch(state: _State, stage: StagePlan) -> _State:

@@ -89,6 +89,7 @@ class ExcludedCode(StrEnum):
     TOO_HOT = "too-hot"
     OTHER_TEMPERATURE = "other-temperature"
     SAFETY = "safety"
+    MEETING = "meeting"
 
 
 @dataclass(frozen=True)

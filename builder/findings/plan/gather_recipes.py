@@ -1,0 +1,92 @@
+"""One recipe, as facts of a plan: what it states, and what its own runs say."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable, Mapping, Sequence
+
+from builder.findings.own_rates import OwnRate, at_confidence, films_run, own_rate
+from builder.findings.plan.defaults import default_phi, defaults_of
+from builder.findings.plan.facts import EtchFacts, LevelBand, MaskFact, OwnFact, RatioFact, Span
+from builder.findings.plan.gather_etchants import span_of
+from builder.findings.plan.gather_safety import of_recipe, of_recipe_by_film
+from builder.records.etches import Etch
+from builder.records.lab import LabRecords
+from builder.records.terms import Method, PublishedConditions
+
+_ZERO_DEGC_K = 273.15
+
+
+def etch_facts(records: LabRecords, etch: Etch, levels: Sequence[float]) -> EtchFacts:
+    etchant = records.etchants[etch.etchant]
+    defaults = defaults_of(records.settings)
+    own = {film: rate for film in films_run(records, etch) if (rate := own_rate(records, etch, film))}
+    stated = None if etch.nonuniformity is None else etch.nonuniformity.number
+    phi = default_phi(defaults, etch.method, gas_bubbles=bool(etchant.gas_bubbles))
+    ratio = etch.undercut_ratio
+    forbidden, cautions = of_recipe(records, etch)
+    cycle = etch.seconds_per_cycle
+    return EtchFacts(
+        id=etch.id, name=etch.name, etchant=etch.etchant, method=etch.method, tool=etch.tool,
+        status=etch.status, inherits=_inherits(etch), targets=etch.targets,
+        phi=phi if stated is None else stated, offset_s=_offset(etch, own),
+        overetch=0.0 if etch.overetch is None else etch.overetch.number,
+        endpoint=etch.endpoint is not None, cooled=etch.cooling is not None,
+        isotropic=bool(etchant.isotropic) if etch.isotropic is None else etch.isotropic,
+        temperature=span_of(etch.temperature), cycle_s=None if cycle is None else cycle.number,
+        ratio=None if ratio is None else RatioFact(
+            low=ratio.low, mid=ratio.mid, high=ratio.high, basis=ratio.basis
+        ),
+        masks=tuple(
+            MaskFact(film=mask.film, on=mask.on, longest_s=mask.longest_time_held.number) for mask in etch.masks
+        ),
+        gas=of_recipe_by_film(records, etch), forbidden=forbidden,
+        cautions=cautions,
+        own={
+            film: fact for film, rate in own.items() if (fact := _own(records, rate, levels)) is not None
+        },
+        clearing=etch.clearing, if_not_cleared=etch.if_not_cleared,
+    )  # fmt: skip
+
+
+def _inherits(etch: Etch) -> bool:
+    if etch.method in (Method.PLASMA, Method.CYCLIC):
+        return etch.published_conditions is PublishedConditions.SAME
+    return True
+
+
+def _offset(etch: Etch, own: Mapping[str, OwnRate]) -> float:
+    transfer = 0.0 if etch.transfer_time is None else etch.transfer_time.number
+    if etch.induction is not None:
+        return etch.induction.number + transfer
+    fitted = [
+        rate.induction_s for film in etch.targets if (rate := own.get(film)) and rate.induction_s is not None
+    ]
+    return (fitted[0] if fitted else 0.0) + transfer
+
+
+def _own(records: LabRecords, rate: OwnRate, levels: Sequence[float]) -> OwnFact | None:
+    if rate.next_run is None:
+        return None
+    bands = []
+    for level in levels:
+        run = at_confidence(records, rate, level)
+        assert run is not None
+        bands.append(
+            LevelBand(confidence=level, low=run.lo_nm_per_s, mid=run.mid_nm_per_s, high=run.hi_nm_per_s)
+        )
+    rows = [row for run in rate.used for row in run.rows]
+    times = _span(row.time_s for row in rows)
+    assert times is not None
+    return OwnFact(
+        levels=tuple(bands), runs=rate.next_run.n_runs, limits=rate.next_run.n_limits, times=times,
+        limit_s=times.high if rate.next_run.n_runs == 0 else None,
+        temperature=_span(
+            None if row.temperature_degc is None else row.temperature_degc + _ZERO_DEGC_K for row in rows
+        ),
+        load_cm2=_span(row.load_cm2 for row in rows), induction_s=rate.induction_s,
+    )  # fmt: skip
+
+
+def _span(values: Iterable[float | None]) -> Span | None:
+    known = [value for value in values if value is not None]
+    return Span(low=min(known), high=max(known)) if known else None
