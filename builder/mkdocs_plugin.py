@@ -10,6 +10,7 @@ from pathlib import Path
 from typing import Any, Literal
 
 from mkdocs.commands.build import build
+from mkdocs.commands.serve import serve as serve_with_mkdocs
 from mkdocs.config import config_options, load_config
 from mkdocs.config.base import Config
 from mkdocs.config.defaults import MkDocsConfig
@@ -116,7 +117,7 @@ class EtchwrightPlugin(BasePlugin[PluginConfig]):  # type: ignore[no-untyped-cal
         search: Any = config.plugins.get("material/search") or config.plugins.get("search")
         if search is not None:
             search.search_index.entries += [
-                {"location": page.url, "title": page.title, "text": page.search_text}
+                {"location": page.url, "title": page.found_as or page.title, "text": page.search_text}
                 for page in self._pages.values()
             ]
 
@@ -156,6 +157,12 @@ def build_site(
 ) -> list[Problem]:
     """Build the site of a lab with MkDocs as its host; see `pipeline.build_site`."""
     return pipeline.build_site(lab_dir, out_dir, as_of, progress or _silent, write_with_mkdocs)
+
+
+def serve(lab_dir: Path, address: str) -> None:
+    """Show a lab's site at `address` (host:port) and build it anew when a record changes, until stopped."""
+    os.environ["NO_MKDOCS_2_WARNING"] = "1"
+    serve_with_mkdocs(str(find_mkdocs_file(lab_dir)), dev_addr=address)
 
 
 def _source(url: str) -> str:

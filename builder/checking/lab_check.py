@@ -26,10 +26,12 @@ class ShapedFile:
 
 
 def check_lab(
-    lab_dir: Path, as_of: datetime.date | None = None, shipped: Shipped | None = None
+    lab_dir: Path | None, as_of: datetime.date | None = None, shipped: Shipped | None = None
 ) -> tuple[LabRecords | None, Sequence[Problem]]:
     """
-    Read and check a lab and the shipped reference; return the records and every problem, sorted.
+    Read and check a lab and the shipped reference (without `lab_dir` the latter alone).
+
+    Returns the records and every problem, sorted.
 
     The records are None if a problem is an error: a plan without the broken fact might call
     something safe. `as_of` None means the day of the lab's settings, else that of the clock.

@@ -10,6 +10,7 @@ from builder.checking import (
     rules_recipes,
     rules_references,
     rules_runs,
+    rules_safety,
     rules_samples,
     rules_tools,
 )
@@ -25,5 +26,6 @@ RULES: tuple[Rule, ...] = (
     *rules_recipe_tools.RULES,
     *rules_runs.RULES,
     *rules_samples.RULES,
+    *rules_safety.RULES,
 )
 """Run in this order; the problems are sorted by place in the end."""

@@ -77,10 +77,12 @@ def plating_metal_in_hf(
     if tool is not None and tool.kind is not ToolKind.BENCH:
         return
     for film_id in dict.fromkeys(film_ids):
-        if is_plating_metal(records.films[film_id]):
+        film = records.films[film_id]
+        refused = tool is not None and tool.refusal(film) is not None
+        if is_plating_metal(film) and not refused:
             yield caution(
                 "plating-metal-in-hf",
-                f"{records.films[film_id].name} in {etchant.name}: traces of it plate out on bare silicon. "
+                f"{film.name} in {etchant.name}: traces of it plate out on bare silicon. "
                 "Never in a tank that others share; use a beaker of your own and throw the acid away.",
             )
 

@@ -36,7 +36,7 @@ def _waste_stream(checked: Checked) -> Iterator[Fault]:
 def _unknown_mixtures(checked: Checked) -> Iterator[Fault]:
     for etchant in checked.records.etchants.values():
         is_covered = etchant.precaution is not None or "precaution" in etchant.pending
-        if not etchant.parts and not is_covered:
+        if etchant.parts_unknown is not None and not is_covered:
             words = f"nobody knows the parts of {etchant.name}, and no precaution covers it"
             yield Fault(etchant.file, "", words, _HINT)
 

@@ -2,30 +2,53 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterable, Iterator
+from collections.abc import Callable, Iterable, Iterator, Mapping
 from dataclasses import dataclass
-from typing import TypeAlias
+from typing import Protocol, TypeAlias
 
 from builder.checking.rule import Checked, Fault, Rule
 from builder.checking.sample_outline import Name, Outline, outline_of
 from builder.problems import suggestion
-from builder.records.lab import LabRecords
+from builder.records.film_names import FilmNames
 from builder.records.samples import ANY_ETCH, NOTHING_UNDER, Sample
 from builder.records.terms import Role
 
 _WAFER_NM = 50_000.0
 """Thinnest layer taken for a wafer, 50 um. Common practice, no source."""
-_MEMBERS_SHOWN = 4
 
 SampleFault: TypeAlias = tuple[str, str, str]
 """Pointer, message, hint."""
+
+
+class SampleNames(Protocol):
+    """Everything that a sample may name, by id: the records of a lab, or a store of facts."""
+
+    @property
+    def films(self) -> Mapping[str, object]:
+        """Films and families of films."""
+
+    @property
+    def film_names(self) -> FilmNames:
+        """Films by every name."""
+
+    @property
+    def tools(self) -> Mapping[str, object]:
+        """Tools."""
+
+    @property
+    def etchants(self) -> Mapping[str, object]:
+        """Etchants."""
+
+    @property
+    def etches(self) -> Mapping[str, object]:
+        """Recipes."""
 
 
 @dataclass(frozen=True)
 class Known:
     """The records a sample may name; `is_broken` tells whether a file (kind, id) is there, but unusable."""
 
-    records: LabRecords
+    records: SampleNames
     is_broken: Callable[[str, str], bool]
 
 
@@ -51,15 +74,6 @@ def _unknown_films(outline: Outline, known: Known) -> Iterator[SampleFault]:
         if name.text not in known.records.films and not known.is_broken("films", name.text):
             hint = known.records.film_names.suggestion(name.text)
             yield name.pointer, f'there is no film "{name.text}"', hint
-
-
-def _families(outline: Outline, known: Known) -> Iterator[SampleFault]:
-    for name in outline.films:
-        record = known.records.films.get(name.text)
-        if record is not None and record.is_family:
-            members = ", ".join(record.members[:_MEMBERS_SHOWN])
-            hint = f"name the film as deposited, for example {members}" if members else ""
-            yield name.pointer, f'"{name.text}" stands for several films', hint
 
 
 def _unknown_tools(outline: Outline, known: Known) -> Iterator[SampleFault]:
@@ -159,7 +173,6 @@ def _unclear_steps(sample: Sample) -> Iterator[SampleFault]:
 
 OUTLINE_RULES: tuple[OutlineRule, ...] = (
     OutlineRule("unknown-id", _unknown_films),
-    OutlineRule("family-for-film", _families),
     OutlineRule("unknown-id", _unknown_tools),
     OutlineRule("unknown-id", _unknown_etchants),
     OutlineRule("unknown-id", _unknown_recipes),

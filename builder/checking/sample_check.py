@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator, Mapping, Sequence
 from pathlib import Path
 
-from builder.checking.rules_samples import OUTLINE_RULES, SAMPLE_RULES, Known
+from builder.checking.rules_samples import OUTLINE_RULES, SAMPLE_RULES, Known, SampleNames
 from builder.checking.sample_outline import outline_of
 from builder.checking.schema import check_shape
 from builder.checking.schema_files import Schemas
@@ -13,13 +13,12 @@ from builder.problems import Problem, has_errors, sorted_problems
 from builder.reading.lab_tree import Kind, find_shipped
 from builder.reading.raw import Raw
 from builder.reading.yaml_files import read_yaml
-from builder.records.lab import LabRecords
 from builder.records.samples import Sample
 from builder.records.terms import Origin
 
 
 def check_sample(
-    path: Path, records: LabRecords, file: str | None = None
+    path: Path, records: SampleNames, file: str | None = None
 ) -> tuple[Sample | None, Sequence[Problem]]:
     """
     Read and check one sample file (YAML or JSON); `file` is the name shown, by default the path.
@@ -34,7 +33,7 @@ def check_sample(
     return None if has_errors(found) else sample, found
 
 
-def check_sample_data(raw: Raw, records: LabRecords) -> tuple[Sample | None, Sequence[Problem]]:
+def check_sample_data(raw: Raw, records: SampleNames) -> tuple[Sample | None, Sequence[Problem]]:
     """Check a sample that was read already, or made from the words of a command, as `check_sample`."""
     problems = check_shape(Kind.SAMPLES, raw, Schemas(find_shipped().schemas))
     has_shape = not problems and not raw.unreadable
@@ -46,7 +45,7 @@ def check_sample_data(raw: Raw, records: LabRecords) -> tuple[Sample | None, Seq
     return None if has_errors(problems) else sample, sorted_problems(problems)
 
 
-def _outline_problems(raw: Raw, records: LabRecords) -> Iterator[Problem]:
+def _outline_problems(raw: Raw, records: SampleNames) -> Iterator[Problem]:
     known = Known(records, is_broken=lambda _kind, _name: False)
     outline = outline_of(raw.data)
     for rule in OUTLINE_RULES:

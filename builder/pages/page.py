@@ -4,7 +4,6 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
-
 @dataclass(frozen=True)
 class Heading:
     """A heading of a page that can be linked to; `level` 2 is right below the title."""
@@ -20,7 +19,8 @@ class Page:
     A page ready for any host.
 
     `url` is relative to the root of the site and ends in `.html`. `html` is the finished content
-    with its `h1`; every link in it is relative. `search_text` is plain text.
+    with its `h1`; every link in it is relative. `search_text` is plain text; `found_as` is the name
+    among search results, where words count most (empty: the title).
     """
 
     url: str
@@ -29,6 +29,7 @@ class Page:
     html: str
     search_text: str
     description: str
+    found_as: str = ""
 
 
 @dataclass(frozen=True)

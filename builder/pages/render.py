@@ -35,15 +35,15 @@ class PageView(Protocol):
     def search_text(self) -> str: ...
 
 
-def render_page(template: str, view: PageView) -> Page:
-    """Return the finished page of a view, by the template `<template>.html.j2`."""
+def render_page(template: str, view: PageView, found_as: str = "") -> Page:
+    """Return the finished page of a view, by the template `<template>.html.j2`; see `Page.found_as`."""
     html = (
         _environment()
         .get_template(f"{template}.html.j2")
         .render(view=view, href=partial(relative_url, view.url))
     )
     title, description = in_words(view.title), in_words(view.description)
-    return Page(view.url, title, _headings(html), html, view.search_text, description)
+    return Page(view.url, title, _headings(html), html, view.search_text, description, in_words(found_as))
 
 
 def script_json(value: object) -> Markup:

@@ -8,11 +8,10 @@ from pathlib import Path
 
 from builder.problems import Problem, Severity, suggestion
 from builder.reading.raw import JsonValue, Place, Positions, Raw, join_pointer
-from builder.reading.text_files import read_text
+from builder.reading.text_files import VISIBLE, read_text
 
 _FIELD = re.compile(r'[ \t]*"((?:[^"]|"")*)"[ \t]*|([^",]*)')
-_UNSEEN = re.compile(r"[^\t -~\xa0-\u2027\u202f-\u2065\u206a-\ud7ff\ue000-\ufffd\U00010000-\U0010ffff]")
-"""As in `yaml_files`, without the line breaks, which split the lines before."""
+_UNSEEN = re.compile(rf"[^\t{VISIBLE}]")
 
 
 @dataclass(frozen=True)

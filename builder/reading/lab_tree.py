@@ -117,9 +117,9 @@ def find_shipped() -> Shipped:
     raise FileNotFoundError(f"no schemas in {package}, nor beside it; install the package again")
 
 
-def read_lab(lab: Path, *, columns: Columns | None = None, shipped: Shipped | None = None) -> LabFiles:
+def read_lab(lab: Path | None, *, columns: Columns | None = None, shipped: Shipped | None = None) -> LabFiles:
     """
-    Read every record of the lab in folder `lab`, and every shipped one.
+    Read every record of the lab in folder `lab`, and every shipped one; without `lab` these alone.
 
     `columns` are those of a run table. The reference is always read from the shipped place; a copy
     of it in the lab would drift apart unseen, so a different one is an error.
@@ -129,7 +129,7 @@ def read_lab(lab: Path, *, columns: Columns | None = None, shipped: Shipped | No
     found: list[tuple[Origin, _Found]] = []
     for origin, walk in (
         (Origin.REFERENCE, _reference_files(shipped)),
-        (Origin.LAB, _lab_files(lab, shipped)),
+        (Origin.LAB, () if lab is None else _lab_files(lab, shipped)),
     ):
         for item in walk:
             if isinstance(item, Problem):

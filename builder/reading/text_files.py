@@ -9,6 +9,16 @@ from builder.problems import Problem, Severity
 MAX_BYTES = 5_000_000
 """Largest file read; a record has a few kilobytes, so a larger file is a mistake."""
 
+VISIBLE = (
+    r" -~\xa0-\xac\xae-\u200a\u200c\u200d\u2010-\u2027\u202f-\u205f"
+    r"\u2070-\ud7ff\ue000-\ufefe\uff00-\ufffd\U00010000-\U0010ffff"
+)
+"""
+Characters a record may hold, as part of a pattern. Left out: control characters, line breaks that
+editors do not show as such, marks that reorder a line, and letters of no width, which make two equal
+names differ.
+"""
+
 _BYTE_ORDER_MARK = "\ufeff"
 
 

@@ -17,14 +17,13 @@ import yaml
 from builder.problems import Problem, Severity
 from builder.reading.raw import JsonValue, Place, Positions, Raw, join_pointer
 from builder.reading.scalars import ScalarFault, plain_scalar
-from builder.reading.text_files import read_text
+from builder.reading.text_files import VISIBLE, read_text
 
 MAX_DEPTH = 64
 """Deepest nesting read; records nest about six deep."""
 
 _FAST_LOADER = getattr(yaml, "CSafeLoader", yaml.SafeLoader)
-_UNSEEN = re.compile(r"[^\t\n\r -~\xa0-\u2027\u202f-\u2065\u206a-\ud7ff\ue000-\ufffd\U00010000-\U0010ffff]")
-"""Control characters, line breaks that editors do not show as such, and marks that reorder a line."""
+_UNSEEN = re.compile(rf"[^\t\n\r{VISIBLE}]")
 
 
 def read_yaml(path: Path, file: str) -> tuple[Raw | None, list[Problem]]:

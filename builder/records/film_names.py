@@ -23,15 +23,20 @@ class FilmNames:
     @classmethod
     def of(cls, films: Iterable[Film]) -> FilmNames:
         """Return the index of the films."""
-        by_form: dict[str, list[str]] = {}
-        names: dict[str, list[str]] = {}
         # A film called so goes before one that only has the formula, and a film before a family.
         ordered = sorted(films, key=lambda film: (film.is_family, film.id))
-        called = [(film, name) for film in ordered for name in (film.id, film.name, *film.synonyms)]
-        made_of = [(film, film.formula) for film in ordered if film.formula]
-        for film, name in (*called, *made_of):
-            _add(by_form, _form(name), film.id)
-            _add(names, name, film.id)
+        called = [(film.id, name) for film in ordered for name in (film.id, film.name, *film.synonyms)]
+        made_of = [(film.id, film.formula) for film in ordered if film.formula]
+        return cls.of_pairs([*called, *made_of])
+
+    @classmethod
+    def of_pairs(cls, pairs: Iterable[tuple[str, str]]) -> FilmNames:
+        """Return the index of pairs of a film's id and one of its names, the best known first."""
+        by_form: dict[str, list[str]] = {}
+        names: dict[str, list[str]] = {}
+        for film, name in pairs:
+            _add(by_form, _form(name), film)
+            _add(names, name, film)
         return cls(
             {form: tuple(ids) for form, ids in by_form.items()},
             {name: tuple(ids) for name, ids in names.items()},

@@ -79,6 +79,17 @@ class LabRecords:
     samples: Mapping[str, Sample] = field(default_factory=dict)
     film_names: FilmNames = field(default_factory=lambda: FilmNames.of(()))
 
+    @property
+    def size(self) -> int:
+        """How many records there are: files of one record, and entries of lists."""
+        single = (
+            self.sources, self.films, self.chemicals, self.etchants, self.couples, self.mixing, self.groups,
+            self.containers, self.codes, self.precautions, self.hazards, self.products, self.constants,
+            self.tools, self.etches, self.samples,
+        )  # fmt: skip
+        listed = (self.rates, self.statements, self.hints, self.runs)
+        return sum(map(len, single)) + sum(len(entries) for kind in listed for entries in kind.values())
+
     @functools.cached_property
     def mixing_by_side(self) -> Mapping[tuple[SideKind, str], tuple[MixingRule, ...]]:
         """Every mixing rule by what either of its sides names."""

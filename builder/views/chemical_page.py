@@ -68,7 +68,6 @@ def _facts(records: LabRecords, chemical: Chemical) -> tuple[Fact, ...]:
         ("Molar mass", as_written(chemical.molar_mass.text) if chemical.molar_mass else None),
         ("Boiling point", as_written(chemical.boiling_point.text) if chemical.boiling_point else None),
         ("Boiling point of the solution", chemical.boiling_point_solution),
-        ("Reacts as", ", ".join(records.groups[group].name for group in chemical.groups)),
         ("Containers", chemical.containers_note),
     )
     if not chemical.parts:

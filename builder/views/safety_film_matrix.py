@@ -2,6 +2,9 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
+from dataclasses import replace
+
 from builder.records.film_chemistry import hydride_of
 from builder.records.lab import LabRecords
 from builder.records.mixing_match import (
@@ -41,7 +44,7 @@ def film_matrix(records: LabRecords) -> MatrixPage:
         for _, column in columns:
             met = [meeting.rule for meeting in meetings(records, column, presence)]
             rules += met
-            cells.append(mixing_cell(met) if met else _no_rule(records, film_id, column))
+            cells.append(_with_gas(met) if met else _no_rule(records, film_id, column))
         if not film.is_family and any(cell is not UNKNOWN for cell in cells):
             rows.append(Row(film_link(records, film_id), tuple(cells)))
     return MatrixPage(
@@ -89,6 +92,12 @@ def _is_of_films(rule: MixingRule) -> bool:
 def _other(rule: MixingRule) -> tuple[SideKind, str]:
     side = rule.b if rule.a.kind is SideKind.FILM_GROUP else rule.a
     return side.kind, side.id or side.text or ""
+
+
+def _with_gas(rules: Sequence[MixingRule]) -> Cell:
+    cell = mixing_cell(rules)
+    gases = dict.fromkeys(gas for rule in rules for gas in (rule.gas or "").split(", ") if gas)
+    return replace(cell, mark=f"{cell.mark} {', '.join(gases)}".strip())
 
 
 def _no_rule(records: LabRecords, film_id: str, column: Presence) -> Cell:

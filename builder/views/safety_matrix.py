@@ -73,7 +73,7 @@ UNKNOWN = Cell(UNKNOWN_MARK, "unknown")
 SELF = Cell("–", "self")
 MIXING_LEGEND = (
     (Cell("never", "never"), "they must never meet"),
-    (Cell("care", "care"), "they meet only on purpose, with the care its evidence names"),
+    (Cell("care", "care"), "they may meet only on purpose, with the care that the evidence names"),
     (UNKNOWN, "no record: treat as incompatible"),
 )
 

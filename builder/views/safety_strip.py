@@ -11,7 +11,7 @@ from builder.records.etchants import Etchant
 from builder.records.lab import LabRecords
 from builder.records.mixing_match import HF_PRECAUTION
 from builder.records.safety import Precaution
-from builder.records.terms import Signal, Trust
+from builder.records.terms import SideKind, Signal, Trust
 from builder.views.link import Link
 from builder.views.references import Citation, Fact, citations, known_facts
 from builder.views.safety_words import PICTOGRAM_NAMES, SIGNAL_WORDS, VERIFY, pending_words
@@ -20,6 +20,7 @@ HF_SENTENCE = (
     "Hydrofluoric acid, or gives it: never alone, calcium gluconate gel at hand and in date, "
     "trained people only."
 )
+MIXTURE_SENTENCE = "These are the hazards of its parts, each at stock strength. The mixture may be worse."
 HF_PAGE = Link("Read the hydrofluoric acid page before you touch it.", "safety/hydrofluoric-acid.html")
 PLASMA_PAGE = Link("Plasma hazards: gas, chamber, pump, residue.", "safety/plasma.html")
 FIRST_ETCH_PAGE = Link("Before your first wet etch.", "safety/before-your-first-wet-etch.html")
@@ -50,6 +51,7 @@ class PrecautionBlock:
     name: str
     first: tuple[Fact, ...]
     facts: tuple[Fact, ...]
+    overrides: str
     trust: str
     citations: tuple[Citation, ...]
 
@@ -67,10 +69,12 @@ class SafetyStrip:
     diamonds: tuple[Diamond, ...]
     statements: tuple[HazardStatement, ...]
     no_statement: str
+    of_parts: str
     sentences: tuple[str, ...]
     unknown: tuple[str, ...]
     handling: tuple[Fact, ...]
     precautions: tuple[PrecautionBlock, ...]
+    overrides: tuple[str, ...]
     waste: str
     data_sheet: str
     local_rules: tuple[str, ...]
@@ -88,10 +92,15 @@ def chemical_strip(records: LabRecords, chemical: Chemical) -> SafetyStrip:
         diamonds=tuple(_diamond(code) for code in chemical.pictograms),
         statements=tuple(_statement(records, code, ()) for code in chemical.h_codes),
         no_statement=_no_statement(chemical),
+        of_parts="",
         sentences=tuple(_sentences(is_hf, chemical.never_capped is True)),
         unknown=tuple(f"{words[0].upper()}{words[1:]} pending." for words in _pending(chemical)),
-        handling=known_facts(("First action", chemical.first_action)),
+        handling=known_facts(
+            ("Reacts as", _groups(records, SideKind.CHEMICAL, chemical.id)),
+            ("First action", chemical.first_action),
+        ),
         precautions=precautions,
+        overrides=tuple(dict.fromkeys(block.overrides for block in precautions)),
         waste=chemical.waste or _waste(precautions),
         data_sheet=_data_sheet(chemical),
         local_rules=records.settings.local_rules,
@@ -112,10 +121,12 @@ def etchant_strip(records: LabRecords, etchant: Etchant) -> SafetyStrip:
         diamonds=tuple(_diamond(code) for code in hazards.pictograms),
         statements=tuple(_statement(records, code, bearers) for code, bearers in hazards.codes),
         no_statement="No hazard statement of its parts is on record. That does not make it harmless.",
+        of_parts=MIXTURE_SENTENCE if len(etchant.parts) > 1 else "",
         sentences=tuple(_sentences(hazards.holds_hf, hazards.is_never_capped)),
         unknown=(*hazards.unknown, *_etchant_pending(etchant)),
         handling=_handling(records, etchant),
         precautions=precautions,
+        overrides=tuple(dict.fromkeys(block.overrides for block in precautions)),
         waste=_waste(precautions),
         data_sheet="The data sheets of its parts; a mixture made at the bench has none of its own.",
         local_rules=records.settings.local_rules,
@@ -144,8 +155,8 @@ def precaution_block(records: LabRecords, precaution: Precaution) -> PrecautionB
             ("Alarms and checks", precaution.monitoring),
             ("Storage and waste", precaution.storage_and_waste),
             ("Besides", precaution.extra),
-            ("What overrides this", precaution.defer_to),
         ),
+        overrides=precaution.defer_to,
         trust=_trust_words(precaution),
         citations=citations(records, precaution.source, precaution.trust),
     )
@@ -204,6 +215,14 @@ def _etchant_pending(etchant: Etchant) -> Iterable[str]:
         yield f"{words[0].upper()}{words[1:]} pending."
 
 
+def _groups(records: LabRecords, kind: SideKind, record_id: str) -> str:
+    """Return the names of the groups that a substance itself belongs to."""
+    own = records.etchants[record_id] if kind is SideKind.ETCHANT else records.chemicals[record_id]
+    names = {group.name for group in records.groups.values() if record_id in group.members}
+    names |= {records.groups[group].name for group in own.groups if group in records.groups}
+    return "; ".join(sorted(names))
+
+
 def _data_sheet(chemical: Chemical) -> str:
     by = f", CAS {', '.join(chemical.cas)}" if chemical.cas else ""
     product = f"{chemical.name}{by}"
@@ -211,10 +230,12 @@ def _data_sheet(chemical: Chemical) -> str:
 
 
 def _handling(records: LabRecords, etchant: Etchant) -> tuple[Fact, ...]:
+    reacts = ("Reacts as", _groups(records, SideKind.ETCHANT, etchant.id))
     mixture = etchant.mixture
     if mixture is None:
-        return ()
+        return known_facts(reacts)
     return known_facts(
+        reacts,
         ("Used for", mixture.use),
         ("Order of mixing", mixture.order_of_mixing),
         ("Heat, gas, hazards", mixture.hazards),

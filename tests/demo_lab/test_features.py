@@ -8,11 +8,10 @@ from collections import Counter
 from collections.abc import Sequence
 
 from builder.engine import NextRunKind, intervals_conflict
-from builder.findings.own_rates import OwnRate, own_rate
+from builder.findings.own_rates import LeftOut, OwnRate, own_rate
 from builder.problems import Problem, Severity
 from builder.records.lab import LabRecords
-from builder.records.samples import Sample
-from builder.records.terms import Method, Origin, Role, Status, Treatment
+from builder.records.terms import Method, Origin, Status
 
 LITERATURE_STD = 0.25
 """Standard deviation of ln(rate) of a published rate of thermal oxide in a bath, as in the lab's settings."""
@@ -198,8 +197,8 @@ def test_chips_and_narrow_trenches_are_told_apart(records: LabRecords) -> None:
     """Another load and another window do not enter the interval of the wafers."""
     own = _own(records, "silicon-rie", "si-100")
     left_out = Counter(run.left_out for run in own.runs if run.left_out is not None)
-    assert left_out["other-load"] >= 2
-    assert left_out["other-window"] >= 1
+    assert left_out[LeftOut.OTHER_LOAD] >= 2
+    assert left_out[LeftOut.OTHER_WINDOW] >= 1
 
 
 def test_two_gauges(records: LabRecords) -> None:
@@ -275,32 +274,3 @@ def test_own_runs_of_target_mask_and_film_below(records: LabRecords) -> None:
     for etch, films in wanted.items():
         assert all(_own(records, etch, film).next_run is not None for film in films), etch
         assert any(mask.film == films[1] and films[0] in mask.on for mask in records.etches[etch].masks), etch
-
-
-def _sample(records: LabRecords, name: str) -> Sample:
-    return records.samples[name]
-
-
-def test_the_samples_of_practitioners(records: LabRecords) -> None:
-    """Each asks the question it is there for."""
-    gold = _sample(records, "gold-pads-in-bhf").also_exposed[0]
-    assert gold.film == "au" and gold.on is None
-    assert _sample(records, "oxide-over-thin-tin").layers[2].film == "tin"
-    lines = _sample(records, "fine-lines-in-thick-oxide")
-    assert lines.goal.line is not None and lines.goal.line.number < 2 * lines.targets[0].thickness_nm
-    assert _sample(records, "boron-membrane-in-koh").layers[2].film == "si-p-plus-plus"
-    assert _sample(records, "gold-on-nickel").layers[2].film == "ni"
-    assert {film.film for film in _sample(records, "platinum-near-hf-dip").also_exposed} == {"pt", "ti"}
-    developer = _sample(records, "aluminium-pads-through-developer")
-    assert [step.treat for step in developer.steps] == [
-        Treatment.DEVELOP,
-        Treatment.REWORK,
-        Treatment.DEVELOP,
-        None,
-    ]
-    assert _sample(records, "aluminium-without-strip").steps[0].etch == "aluminium-rie"
-    assert _sample(records, "oxide-on-polyimide").layers[2].film == "polyimide"
-    assert _sample(records, "chip-on-silicon-carrier").mount.carrier == "si-100"
-    assert [film.film for film in _sample(records, "gold-on-chromium").targets] == ["au", "cr"]
-    nitride = _sample(records, "nitride-on-oxide")
-    assert [layer.role for layer in nitride.layers[:3]] == [Role.MASK, Role.TARGET, Role.UNDER]

@@ -52,7 +52,7 @@ def test_next_runs_fall_into_their_intervals(records: LabRecords) -> None:
     hits = sum(outcome.low <= outcome.next_rate <= outcome.high for outcome in fitted)
     # Films of one session share half of their scatter: they count as half as many independent runs.
     worth = len(fitted) // 2
-    low, high = stats.binom.ppf((0.001, 0.999), worth, CONFIDENCE) / worth
+    low, high = (float(stats.binom.ppf(level, worth, CONFIDENCE)) / worth for level in (0.001, 0.999))
     assert len(fitted) >= 700
     assert low <= hits / len(fitted) <= high
 

@@ -83,7 +83,7 @@ def test_forced_colours_leave_no_colour_of_ours(open_page: Open, http_root: str)
       probe.remove();
       return getComputedStyle(document.querySelector(selector)).color === wanted;
     }"""
-    pairs = [(".ew-lead", "CanvasText"), (".ew-quiet", "CanvasText"), (".ew-lead a", "LinkText")]
+    pairs = [(".ew-lead", "CanvasText"), (".ew-crumbs", "CanvasText"), (".ew-lead a", "LinkText")]
     assert [pair for pair in pairs if not page.evaluate(same, list(pair))] == []
 
 
@@ -98,7 +98,7 @@ def test_print_shows_the_page_and_not_the_site(open_page: Open, http_root: str) 
         "(all) => all.filter((b) => b.scrollWidth > b.clientWidth + 1).map((b) => b.innerText.slice(0, 60))"
     )
     assert page.locator(".ew-rows").evaluate_all(wide) == []
-    assert page.evaluate("getComputedStyle(document.querySelector('article p')).color") == "rgb(0, 0, 0)"
+    assert page.evaluate("getComputedStyle(document.querySelector('.ew-lead')).color") == "rgb(0, 0, 0)"
 
 
 @pytest.mark.parametrize("kind", ["recipe", "chemical", "method note"])

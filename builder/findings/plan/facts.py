@@ -190,6 +190,7 @@ class FilmFacts:
     similar: tuple[str, ...] = ()
     adhesion: tuple[str, ...] = ()
     names: tuple[str, ...] = ()
+    formula: str = ""
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -80,7 +80,7 @@ def _film(film: Film) -> FilmFacts:
         id=film.id, name=film.name, family=film.family, is_family=film.is_family, members=film.members,
         barrier=film.barrier, electrical=film.electrical, noble=bool(film.noble), similar=film.similar,
         adhesion=film.adhesion_layer_usual,
-        names=tuple(name for name in (film.name, film.formula, *film.synonyms) if name),
+        names=(film.name, *film.synonyms), formula=film.formula or "",
     )  # fmt: skip
 
 

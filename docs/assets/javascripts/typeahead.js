@@ -13,7 +13,8 @@
     return text.normalize("NFKD").toLowerCase().replace(/[^\p{L}\p{N}]+/gu, "");
   }
 
-  /** Entries whose name or other name holds the word; names that start with it come first. */
+  /** Entries whose name or other name holds the word; what a recipe removes comes first, then the
+   * very name, then names that start with it, then what most recipes remove. */
   function matches(entries, kind, word) {
     const sought = plain(word);
     if (!sought) return [];
@@ -22,16 +23,25 @@
       if (kind && entry.kind !== kind) continue;
       let best = -1;
       let by = "";
+      let exact = false;
       for (const name of [entry.name, entry.id].concat(entry.also)) {
         const at = plain(name).indexOf(sought);
+        exact = exact || plain(name) === sought;
         if (at >= 0 && (best < 0 || at < best)) {
           best = at;
           by = name === entry.name || name === entry.id ? "" : name;
         }
       }
-      if (best >= 0) found.push({ entry: entry, at: best, by: by });
+      if (best >= 0) found.push({ entry: entry, at: best, by: by, exact: exact });
     }
-    found.sort((a, b) => Number(!a.entry.recipes) - Number(!b.entry.recipes) || a.at - b.at || a.entry.name.localeCompare(b.entry.name));
+    found.sort(
+      (a, b) =>
+        Number(!a.entry.recipes) - Number(!b.entry.recipes) ||
+        Number(b.exact) - Number(a.exact) ||
+        a.at - b.at ||
+        b.entry.recipes - a.entry.recipes ||
+        a.entry.name.localeCompare(b.entry.name),
+    );
     return found.slice(0, MOST);
   }
 

@@ -1,0 +1,120 @@
+"""
+The facts of a lab kept beside it between plans, and made anew whenever a record has changed.
+
+The store is a copy that may be deleted at any time: it is used only if every record, schema and
+module that it came from still has the size and the time of change that it had then.
+"""
+
+from __future__ import annotations
+
+import hashlib
+import json
+import os
+from collections.abc import Iterable, Iterator
+from dataclasses import dataclass, field
+from pathlib import Path
+
+from builder.findings.plan.facts import FORMAT, FilmFacts, PlanFacts
+from builder.findings.plan.stored import facts_from_plain, plain
+from builder.records.film_names import FilmNames
+from builder.reading.lab_tree import find_shipped
+
+STORE = Path(".etchwright")
+"""Folder of the store within a lab."""
+
+
+@dataclass(frozen=True)
+class FactNames:
+    """Everything that a sample may name, from facts alone."""
+
+    facts: PlanFacts
+    tools: dict[str, object] = field(default_factory=dict)
+
+    @property
+    def films(self) -> dict[str, object]:
+        """Films and families of films, by id."""
+        return dict(self.facts.films)
+
+    @property
+    def etchants(self) -> dict[str, object]:
+        """Etchants, by id."""
+        return dict(self.facts.etchants)
+
+    @property
+    def etches(self) -> dict[str, object]:
+        """Recipes, by id."""
+        return dict(self.facts.etches)
+
+    @property
+    def film_names(self) -> FilmNames:
+        """Films by every name."""
+        return FilmNames.of_pairs(_pairs(self.facts.films.values()))
+
+
+def names_of(facts: PlanFacts) -> FactNames:
+    """Return what a sample may name."""
+    return FactNames(facts, dict(facts.refused))
+
+
+def load(lab: Path, key: str) -> PlanFacts | None:
+    """Return the stored facts of that key, or None if there are none that can be used."""
+    try:
+        data = json.loads((lab / STORE / _name(key)).read_text(encoding="utf-8"))
+        if not isinstance(data, dict) or data.get("key") != key:
+            return None
+        return facts_from_plain(data["facts"])
+    except (OSError, ValueError, KeyError, TypeError):
+        # A store that cannot be read, or was written by another version, is no store.
+        return None
+
+
+def save(lab: Path, key: str, facts: PlanFacts) -> None:
+    """Keep the facts; where the folder cannot be written the next plan computes them again."""
+    folder = lab / STORE
+    try:
+        folder.mkdir(exist_ok=True)
+        for old in folder.glob("plan-*.json"):
+            old.unlink()
+        beside = folder / f"{_name(key)}.{os.getpid()}"
+        beside.write_text(json.dumps({"key": key, "facts": plain(facts)}), encoding="utf-8")
+        beside.replace(folder / _name(key))
+    except OSError:
+        return
+
+
+def key_of(lab: Path, as_of: str, confidence: float | None, *, reference_only: bool) -> str:
+    """Return what the facts depend on, as one digest: records, schemas, our own modules, and what is asked."""
+    asked = (FORMAT, as_of, confidence, reference_only)
+    digest = hashlib.sha256(repr(asked).encode())
+    for path in _inputs(lab):
+        state = path.stat()
+        digest.update(f"{path}\0{state.st_size}\0{state.st_mtime_ns}\n".encode())
+    return digest.hexdigest()
+
+
+def _inputs(lab: Path) -> Iterator[Path]:
+    shipped = find_shipped()
+    package = Path(__file__).resolve().parents[2]
+    yield from _files(lab.resolve() / "recipes", (".yaml", ".csv"))
+    yield from _files(shipped.reference.resolve(), (".yaml", ".csv"))
+    yield from _files(shipped.schemas.resolve(), (".json",))
+    for part in ("engine", "records", "findings", "checking", "reading"):
+        yield from _files(package / part, (".py",))
+
+
+def _files(folder: Path, endings: tuple[str, ...]) -> Iterator[Path]:
+    for root, folders, files in os.walk(folder):
+        folders.sort()
+        yield from (Path(root, name) for name in sorted(files) if name.endswith(endings))
+
+
+def _pairs(films: Iterable[FilmFacts]) -> list[tuple[str, str]]:
+    ordered = sorted(films, key=lambda film: (film.is_family, film.id))
+    return [
+        *((film.id, name) for film in ordered for name in (film.id, *film.names)),
+        *((film.id, film.formula) for film in ordered if film.formula),
+    ]
+
+
+def _name(key: str) -> str:
+    return f"plan-{key[:16]}.json"

@@ -1,0 +1,64 @@
+"""What an etch does to one film beside its target, by the plan's own rules, without a sample at hand."""
+
+from __future__ import annotations
+
+from builder.engine import Cut, Rank, Schedule, Span, open_by_look, open_by_timer
+from builder.findings.computed import Computed
+from builder.findings.plan.evidence import Etching
+from builder.findings.plan.exposures import Case, Reaching, Timing
+from builder.findings.plan.facts import PlanFacts
+from builder.findings.plan.judging import PlanCaps, judge
+from builder.findings.plan.option import phi_of, reaction_of
+from builder.findings.plan.result import FilmRow
+from builder.findings.plan.sample import PlanFilm, PlanSample, Stage
+from builder.findings.recipe_times import TargetTiming
+from builder.records.terms import Role
+
+SIDE_FILM_NM = 1000.0
+"""Thickness that pages take for a film that nobody has described."""
+
+_NO_WAY = Span(None, None, None)
+
+
+def row_at_latest_stop(
+    computed: Computed, etching: Etching, timing: TargetTiming, film: str, role: Role = Role.EXPOSED
+) -> FilmRow:
+    """Return what a film loses until the latest stop of the target's usual depth."""
+    cut = timing.cut(timing.usual_nm)
+    times = Timing(timing.band, cut, timing.times(timing.usual_nm))
+    return _row(computed, computed.facts, etching, times, timing.film, film, role, timing.known.rank)
+
+
+def row_after(computed: Computed, etching: Etching, film: str, time_s: float) -> FilmRow:
+    """Return what a film loses in a time that is set, from the start."""
+    facts = computed.facts if etching.recipe is not None else computed.reference
+    cut = Cut(
+        depth_nm=SIDE_FILM_NM, thickness_nm=SIDE_FILM_NM, tolerance=0.0, nonuniformity=phi_of(facts, etching),
+        offset_s=0.0, overetch=0.0, reaction_s=reaction_of(facts, etching), through=True,
+    )  # fmt: skip
+    fixed = Schedule(time_s, time_s, time_s, None, time_s, None, None, None)
+    # The time is set, not computed: no target's rate makes it less sure. So a published number of a
+    # chamber that has no own run is still capped, by the film's own rank.
+    rank = Rank.OWN if etching.recipe is not None else Rank.LITERATURE
+    return _row(computed, facts, etching, Timing(None, cut, fixed), film, film, Role.EXPOSED, rank)
+
+
+def _row(
+    computed: Computed,
+    facts: PlanFacts,
+    etching: Etching,
+    timing: Timing,
+    target: str,
+    film: str,
+    role: Role,
+    target_rank: Rank,
+) -> FilmRow:
+    goal = PlanFilm(target, timing.cut.thickness_nm, Role.TARGET, timing.cut.tolerance)
+    stage = Stage(PlanSample("", (goal,)), goal, (), ())
+    reach = Reaching(facts, etching, computed.asked, stage, timing)
+    side = PlanFilm(film, SIDE_FILM_NM, role, computed.facts.defaults.tolerance)
+    case = Case(
+        side, role, open_by_timer(timing.schedule), open_by_look(timing.schedule, timing.cut),
+        lies_on=target if role is Role.MASK else None,
+    )  # fmt: skip
+    return judge(reach, case, PlanCaps(target_rank, (), _NO_WAY, _NO_WAY), (), None)

@@ -1,0 +1,301 @@
+"""Sentences of a plan, made of its codes: the plain voice of a good colleague."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Callable, Mapping
+
+from builder.engine import Ground, Rank, Verdict
+from builder.findings.plan.result import (
+    CapCode,
+    ExcludedCode,
+    FilmRow,
+    LostCode,
+    NoteCode,
+    Option,
+    Remark,
+    UnstatedCode,
+    Value,
+)
+from builder.records.terms import Method, Role
+from builder.views.number_text import length_text, plain_number, temperature_text, time_text
+
+Params = Mapping[str, Value]
+_Sentence = Callable[[Params], str]
+
+RANK_WORDS: dict[Rank, str] = {
+    Rank.OWN: "own runs",
+    Rank.LITERATURE: "literature",
+    Rank.UNCHECKED: "literature, unchecked",
+    Rank.STATEMENT: "a statement without a number",
+    Rank.SIMILAR: "a similar film",
+    Rank.NONE: "nothing on record",
+}
+
+ROLE_WORDS: dict[Role, str] = {
+    Role.MASK: "mask",
+    Role.UNDER: "under the target",
+    Role.EXPOSED: "exposed",
+    Role.BACK: "back",
+    Role.TARGET: "target",
+}
+
+_GROUNDS: dict[Ground, str] = {
+    Ground.ANY_LOSS_ACCEPTED: "it may vanish",
+    Ground.NO_HIGH_END: "only a lowest rate is known; nothing bounds the loss",
+    Ground.NO_ALLOWANCE: "no allowed loss is stated, and the film is too thin for a default",
+    Ground.UNCHECKED: "the number is recalled, not checked",
+    Ground.TARGET_UNCHECKED: "the target's own rate is not checked, so the time is not sure",
+    Ground.BEYOND_TESTED_TIME: "no loss was seen, but nobody tested that long",
+    Ground.STATEMENT_RESISTS: "said to withstand it; nobody measured how well",
+    Ground.STATEMENT_ADVERSE: "said to suffer in it; no rate on record",
+    Ground.STATEMENT_ATTACKS: "said to be attacked",
+    Ground.NO_EVIDENCE: "nothing on record for this film in this etch",
+    Ground.TIME_UNKNOWN: "nobody knows how long the etch takes, so its loss is unknown",
+}
+
+_CAPS: dict[str, _Sentence] = {
+    CapCode.ADVERSE: lambda p: f"on record: it {p['effect']}",
+    CapCode.ADHESION: lambda p: f"no record that this mask stays on {p['on']} in this recipe",
+    CapCode.ADHESION_TIME: lambda p: (
+        f"the mask was seen to stay on {p['on']} for {_time(p, 'held_s')} only"
+        + ("" if p["stop_s"] is None else f", and the etch may take {_time(p, 'stop_s')}")
+    ),
+    CapCode.BACK: lambda p: "what covers the back is not stated, and the back is wet from the start",
+    CapCode.BARRIER: lambda p: f"{p['film']} is not known to be dense; what etches may pass it to {p['under']}",
+    CapCode.CARRIER_LOAD: lambda p: f"the carrier is bare {p['film']} too, and no run had such a load",
+    CapCode.CONFLICT: lambda p: "one own run contradicts the literature",
+    CapCode.COUPLE: lambda p: f"{p['one']} and {p['other']} are wet together; no record of that couple",
+    CapCode.COUPLE_UNDERCUT: lambda p: f"{p['one']} with {p['other']}: {_clause(p['words'])}",
+    CapCode.EARLIER_LOSS: lambda p: "nobody knows what an earlier step has taken",
+    CapCode.EDGE: lambda p: "whether the sample's edge is open is not stated",
+    CapCode.FAMILY: lambda p: "the film is not known exactly; the worst of those it may be counts",
+    CapCode.HEAT: lambda p: "no record of cooling; the mask may get hot",
+    CapCode.LINE: lambda p: (
+        f"a line of {_length(p, 'line_nm')} may lose {_length(p, 'undercut_nm')} from each edge"
+    ),
+    CapCode.LOAD: lambda p: (
+        f"a load of {_area(p, 'load_cm2')} is far from that of the runs, "
+        f"{_area(p, 'low_cm2')} to {_area(p, 'high_cm2')}"
+    ),
+    CapCode.PUBLISHED_CHAMBER: lambda p: "the number is from another chamber, and this one has no own run",
+    CapCode.THROUGH_WAFER: lambda p: "etching through the wafer needs a carrier or a film to stop on",
+    CapCode.UNDER_NOBLE: lambda p: f"{p['layer']} is usual under {p['film']}; what lies there is not stated",
+    CapCode.UNDERCUT_ASSUMED: lambda p: "the undercut is a rule of thumb here; this recipe has none on record",
+    CapCode.UNDERCUT_UNKNOWN: lambda p: "how far the edge moves is not on record, and a line width is asked for",
+}
+
+LIFTS: dict[str, str] = {
+    CapCode.ADVERSE: "look at a test piece under the microscope and record what you see",
+    CapCode.ADHESION: "record a mask that stayed on this film, with its preparation and time",
+    CapCode.ADHESION_TIME: "run a test piece for longer and record the time the mask held",
+    CapCode.BACK: "state the film on the back, or that it is protected",
+    CapCode.BARRIER: "record that the film is dense, or that the mask held",
+    CapCode.CARRIER_LOAD: "state load_cm2 with the carrier in it, or use a carrier of another film",
+    CapCode.CONFLICT: "run a second monitor wafer",
+    CapCode.COUPLE: "etch a piece with both films and record the couple",
+    CapCode.COUPLE_UNDERCUT: "avoid the contact, or measure the undercut on a test piece",
+    CapCode.EARLIER_LOSS: "measure the film after the earlier step",
+    CapCode.EDGE: "state edge: open, protected or unused",
+    CapCode.FAMILY: "name the film as deposited",
+    CapCode.HEAT: "record the recipe's cooling",
+    CapCode.LINE: "make the line wider, or pick an etch with less undercut",
+    CapCode.LOAD: "run a monitor wafer with this load",
+    CapCode.PUBLISHED_CHAMBER: "run one monitor wafer of the target in this chamber",
+    CapCode.THROUGH_WAFER: "state mount.carrier, or the film to stop on",
+    CapCode.UNDER_NOBLE: "state on: the film under it, or on: none",
+    CapCode.UNDERCUT_ASSUMED: "measure the undercut and record the recipe's undercut_ratio",
+    CapCode.UNDERCUT_UNKNOWN: "measure the undercut and record the recipe's undercut_ratio",
+}
+
+_LOST: dict[str, _Sentence] = {
+    LostCode.COUPLE: lambda p: f"{p['one']} touching {p['other']}: {_clause(p['words'])}",
+    LostCode.LINE: lambda p: (
+        f"a line of {_length(p, 'line_nm')} loses at least {_length(p, 'undercut_nm')} from each edge "
+        "and stands on nothing"
+    ),
+    LostCode.MASK_FAILS: lambda p: f"on record: this mask {p['effect']} here",
+    LostCode.ROUGHENED: lambda p: "it roughens, and its surface is critical",
+}
+
+_NOTES: dict[str, _Sentence] = {
+    NoteCode.NOT_A_TARGET: lambda p: f"The recipe is not meant for {p['film']}; its rate is on record all the same.",
+    NoteCode.DRAFT: lambda p: "The recipe is a draft: nobody has called it proven.",
+    NoteCode.CONFLICT: lambda p: "Own runs and the literature contradict each other; the own runs count.",
+    NoteCode.FAR: lambda p: "Own runs were at another temperature and do not count here.",
+    NoteCode.ALL_TEMPERATURES: lambda p: "No temperature is asked for: the rates span all that are on record.",
+    NoteCode.TIME_OUTSIDE_RUNS: lambda p: (
+        f"The runs lasted {_time(p, 'low_s')} to {_time(p, 'high_s')}; up to {_time(p, 'stop_s')} nobody has "
+        "shown that the rate stays the same."
+    ),
+    NoteCode.COUPLE_TARGET: lambda p: f"{p['one']} with {p['other']}: {_clause(p['words'])}.",
+    NoteCode.UNDERCUT_ASSUMED: lambda p: (
+        "An isotropic etch goes sideways at least as far as down (common practice, no source)."
+    ),
+    NoteCode.GAS: lambda p: str(p["words"]),
+    NoteCode.MEETING: lambda p: f"Rinse well between {p['first']} and {p['second']}: {p['words']}",
+    NoteCode.HAZARD: lambda p: str(p["words"]),
+}
+
+_UNSTATED: dict[str, _Sentence] = {
+    UnstatedCode.BACK: lambda p: "the film on the back, or that it is protected",
+    UnstatedCode.EDGE: lambda p: "whether the edge is open, protected or unused",
+    UnstatedCode.UNDER_NOBLE: lambda p: f"what lies under {p['film']} (on: a film, or none)",
+    UnstatedCode.ALLOWED: lambda p: f"how much of {p['film']} may go (allowed_loss)",
+    UnstatedCode.TEMPERATURE: lambda p: "the temperature of the etch",
+    UnstatedCode.LOAD: lambda p: "the open area (goal.load_cm2)",
+    UnstatedCode.LINE: lambda p: "the width of the narrowest masked line (goal.line)",
+    UnstatedCode.STOP: lambda p: "a carrier, or a film to stop on",
+}
+
+_HINTS = {
+    "temperature": "a rate is on record at another temperature",
+    "conditions": "a rate or a statement is on record under other conditions",
+}
+
+_EXCLUDED: dict[str, _Sentence] = {
+    ExcludedCode.NO_EVIDENCE: lambda p: f"nothing on record for {p['film']} here" + _hint_clause(p["hint"]),
+    ExcludedCode.DOES_NOT_ETCH: lambda p: f"no etching of {p['film']} was seen",
+    ExcludedCode.RETIRED: lambda p: "retired",
+    ExcludedCode.TOOL_REFUSES: lambda p: str(p["words"]),
+    ExcludedCode.METHOD: lambda p: f"{p['method']} is outside the sample's limits",
+    ExcludedCode.TOOL: lambda p: f"{p['tool']} is outside the sample's limits",
+    ExcludedCode.ETCHANT: lambda p: f"{p['etchant']} is outside the sample's limits",
+    ExcludedCode.TOO_HOT: lambda p: (
+        f"runs at {_temperature(p, 'recipe_k')}, and the sample may see {_temperature(p, 'limit_k')}"
+    ),
+    ExcludedCode.OTHER_TEMPERATURE: lambda p: (
+        f"runs at {_temperature(p, 'recipe_k')}, not at {_temperature(p, 'asked_k')}"
+    ),
+    ExcludedCode.SAFETY: lambda p: f"not allowed: {p['words']}",
+    ExcludedCode.MEETING: lambda p: f"{p['first']} must not be carried into {p['second']}: {p['words']}",
+}
+
+
+def reason(row: FilmRow) -> str:
+    """Return why a film has its word: what overrides, the loss against what is allowed, then each cap."""
+    if row.lost is not None:
+        return _LOST[row.lost.code](row.lost.params)
+    if any(cap.code == CapCode.BACK for cap in row.caps):
+        return cap_words(next(cap for cap in row.caps if cap.code == CapCode.BACK))
+    return "; ".join([_ground(row), *(cap_words(cap) for cap in row.caps)])
+
+
+def _ground(row: FilmRow) -> str:
+    if row.ground in _GROUNDS:
+        return _GROUNDS[row.ground]
+    assert row.loss.low is not None
+    if row.allowed_nm is None or math.isinf(row.allowed_nm):
+        allowed = ""
+    else:
+        allowed = f" of {_plain_length(row.allowed_nm)} allowed"
+    if row.ground is Ground.MILD_END_EXCEEDS:
+        whole = " (all of it)" if row.loss.low >= row.thickness_nm else ""
+        return f"even the mild end takes {length_text(row.loss.low, None, None).with_unit}{whole}{allowed}"
+    high = "an unknown amount" if row.loss.high is None else length_text(None, None, row.loss.high).with_unit
+    return f"at worst {high.removeprefix('at most ')}{allowed}"
+
+
+def cap_words(cap: Remark) -> str:
+    """Return what a cap says."""
+    return _CAPS[cap.code](cap.params)
+
+
+def note_words(note: Remark) -> str:
+    """Return a note on an option, as a sentence."""
+    return _NOTES[note.code](note.params)
+
+
+def unstated_words(item: Remark) -> str:
+    """Return what a sample does not state."""
+    return _UNSTATED[item.code](item.params)
+
+
+def excluded_words(item: Remark) -> str:
+    """Return why an etch is left out."""
+    return _EXCLUDED[item.code](item.params)
+
+
+def hint_words(hint: str | None) -> str | None:
+    """Return what a hint says, or None without one; it decides nothing."""
+    if hint is None:
+        return None
+    if hint.startswith("similar:"):
+        return f"a similar film is on record: {hint.removeprefix('similar:')}"
+    return _HINTS[hint]
+
+
+def blocker(option: Option) -> str:
+    """Return the one sentence that stands first: what decides the plan."""
+    if not option.rows:
+        return _without_films(option)
+    row = option.rows[0]
+    if option.verdict is Verdict.HOLDS:
+        return f"Every film holds; closest is {row_name(row)}: {reason(row)}."
+    verb = {Verdict.LOST: "is lost", Verdict.BORDERLINE: "may not last", Verdict.UNMEASURED: "is unmeasured"}
+    if option.verdict is not row.verdict:
+        return _without_films(option)
+    return f"{_capital(row_name(row))} {verb[row.verdict]}: {reason(row)}."
+
+
+def _without_films(option: Option) -> str:
+    if option.schedule.latest_stop_s is None:
+        return "How long the etch takes is not on record."
+    if option.verdict is Verdict.HOLDS:
+        return "No other film is reached."
+    return f"The target's rate rests on {RANK_WORDS[option.target_rank]}."
+
+
+def row_name(row: FilmRow) -> str:
+    """Return a film with its place: the mask resist-positive-a."""
+    place = {
+        Role.MASK: f"the mask {row.film}",
+        Role.UNDER: f"{row.film} under the target",
+        Role.BACK: f"{row.film} on the back",
+        Role.EXPOSED: f"exposed {row.film}",
+    }
+    return place.get(row.role, row.film)
+
+
+def method_words(method: Method) -> str:
+    """Return a method as people say it."""
+    return str(method)
+
+
+def _capital(text: str) -> str:
+    return text[:1].upper() + text[1:]
+
+
+def _hint_clause(hint: Value) -> str:
+    return f" ({hint_words(str(hint))})" if hint is not None else ""
+
+
+def _clause(words: Value) -> str:
+    text = str(words).rstrip(".")
+    return text[:1].lower() + text[1:]
+
+
+def _time(params: Params, key: str) -> str:
+    return time_text(_number(params, key))
+
+
+def _length(params: Params, key: str) -> str:
+    return _plain_length(_number(params, key))
+
+
+def _plain_length(value_nm: float) -> str:
+    return length_text(None, value_nm, None).with_unit
+
+
+def _area(params: Params, key: str) -> str:
+    return f"{plain_number(_number(params, key))}\N{NO-BREAK SPACE}cm²"
+
+
+def _temperature(params: Params, key: str) -> str:
+    return temperature_text(_number(params, key))
+
+
+def _number(params: Params, key: str) -> float:
+    value = params[key]
+    assert isinstance(value, (int, float))
+    return float(value)
