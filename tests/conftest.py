@@ -1,7 +1,13 @@
-"""Fixtures that every folder of tests may ask for."""
+"""Fixtures that every folder of tests may ask for, and how property tests are timed."""
 
 from __future__ import annotations
+
+from hypothesis import settings
 
 from tests.browser import any_root, browser, file_root, http_root, open_page, shipped_site
 
 __all__ = ["any_root", "browser", "file_root", "http_root", "open_page", "shipped_site"]
+
+# A first call may import a library or a template; a deadline would fail on a busy machine only.
+settings.register_profile("etchwright", deadline=None)
+settings.load_profile("etchwright")

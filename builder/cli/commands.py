@@ -73,9 +73,9 @@ def group() -> None:
 def main() -> None:
     """Run the command line; bad input ends with exit 1, whatever found it."""
     try:
-        group.main(standalone_mode=False)
-    except click.exceptions.Exit as stop:
-        raise SystemExit(stop.exit_code) from None
+        # Without its own handling of ends, click returns the status that a command ended with.
+        status = group.main(standalone_mode=False)
+        raise SystemExit(status if isinstance(status, int) else 0)
     except click.Abort:
         click.echo("Stopped.", err=True)
         raise SystemExit(1) from None

@@ -18,7 +18,7 @@ F = TypeVar("F", bound=Callable[..., object])
 _DAY_SECONDS = "SOURCE_DATE_EPOCH"
 
 
-class Day(click.ParamType):
+class Day(click.ParamType[datetime.date]):
     """A day as 2026-11-15."""
 
     name = "DAY"

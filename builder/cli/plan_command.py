@@ -28,7 +28,7 @@ NONE_HOLDS = 2
 """Exit status of a plan in which no option holds."""
 
 
-class Confidence(click.ParamType):
+class Confidence(click.ParamType[float]):
     """A two-sided confidence, 0.5 to 1 exclusive, also as a percentage."""
 
     name = "CONFIDENCE"
@@ -45,7 +45,7 @@ class Confidence(click.ParamType):
         return number
 
 
-class Temperature(click.ParamType):
+class Temperature(click.ParamType[Span]):
     """A temperature with its unit, or `room`."""
 
     name = "TEMPERATURE"

@@ -8,7 +8,7 @@ from collections.abc import Iterable, Iterator
 
 import click
 
-from builder.engine import Mode, Verdict
+from builder.engine import Mode, Rank, Verdict
 from builder.findings.plan.facts import PlanFacts
 from builder.findings.plan.result import Excluded, FilmRow, NoteCode, Option, Plan, StagePlan
 from builder.records.terms import Role
@@ -24,7 +24,7 @@ from builder.views.plan_words import (
     row_name,
     unstated_words,
 )
-from builder.views.test_piece import test_piece_words
+from builder.views.test_piece import needs_test_piece, test_piece_words
 
 WIDTH = 92
 _SHOWN_OPTIONS = 5
@@ -57,7 +57,7 @@ def plan_lines(plan: Plan, facts: PlanFacts, *, every: bool) -> Iterator[str]:
             yield ""
         yield from _excluded(stage.excluded, every=every)
     yield from _wrapped(_SAFETY)
-    yield f"As of {plan.as_of}; each interval at {percent_text(plan.confidence)} confidence, for that quantity alone."
+    yield f"As of {plan.as_of}; intervals at {percent_text(plan.confidence)} confidence, each for itself."
 
 
 def _headline(plan: Plan) -> str:
@@ -77,7 +77,8 @@ def _stage_title(stage: StagePlan) -> Iterator[str]:
 
 
 def _option(option: Option, facts: PlanFacts, *, in_full: bool) -> Iterator[str]:
-    yield f"{_mark(option.verdict)} {click.style(_name(option), bold=True)}  {_word(option.verdict)}{_by_look(option)}"
+    name = click.style(_name(option), bold=True)
+    yield f"{_mark(option.verdict)} {name}  {_word(option.verdict)}{_by_look(option)}"
     yield from _indented(_times(option))
     if not in_full:
         yield from _indented([blocker(option)])
@@ -85,9 +86,11 @@ def _option(option: Option, facts: PlanFacts, *, in_full: bool) -> Iterator[str]
     yield from _indented(_rate(option))
     recipe = facts.etches.get(option.recipe or "")
     if recipe is not None:
-        yield from _indented([f"Cleared: {recipe.clearing}", f"If it has not cleared: {recipe.if_not_cleared}"])
+        yield from _indented(
+            [f"Cleared: {recipe.clearing}", f"If it has not cleared: {recipe.if_not_cleared}"]
+        )
     for row in option.rows:
-        yield from _film(row)
+        yield from _film(row, facts)
     yield from _undercut(option)
     yield from _remarks(option)
 
@@ -123,11 +126,12 @@ def _rate(option: Option) -> list[str]:
     if band is None:
         return [f"Rate of {option.target}: unknown ({grounds})."]
     shown = rate_text(band.low, band.mid, band.high)
-    interval = f" ({shown.interval_with_unit}, next run)" if shown.interval else ""
+    whose = ", next run" if option.target_rank is Rank.OWN else ""
+    interval = f" ({shown.interval_with_unit}{whose})" if shown.interval else ""
     return [f"Rate of {option.target}: {shown.with_unit}{interval}, from {grounds}."]
 
 
-def _film(row: FilmRow) -> Iterator[str]:
+def _film(row: FilmRow, facts: PlanFacts) -> Iterator[str]:
     allowed = "any loss allowed" if row.allowed_nm is not None and math.isinf(row.allowed_nm) else ""
     head = f"{_mark(row.verdict)} {row_name(row)}: {_word(row.verdict)}"
     if row.verdict_by_look is not row.verdict:
@@ -139,9 +143,10 @@ def _film(row: FilmRow) -> Iterator[str]:
     if hint := hint_words(row.hint):
         yield from _indented([f"Hint, decides nothing: {hint}."], 8)
     if row.verdict in (Verdict.BORDERLINE, Verdict.UNMEASURED):
-        lifts = [LIFTS[cap.code] for cap in row.caps]
-        steps = [*dict.fromkeys(lifts), test_piece_words(row)]
-        yield from _indented([f"To settle it: {'; '.join(step for step in steps if step)}."], 8)
+        piece = [test_piece_words(row, facts.films[row.film].family)] if needs_test_piece(row) else []
+        steps = [*dict.fromkeys(LIFTS[cap.code] for cap in row.caps), *piece]
+        if steps:
+            yield from _indented([f"To settle it: {'; '.join(steps)}."], 8)
 
 
 def _remaining(row: FilmRow) -> str:
@@ -208,4 +213,11 @@ def _indented(texts: Iterable[str], by: int = 4) -> Iterator[str]:
 
 def _wrapped(text: str, by: int = 0) -> list[str]:
     # A width that wraps on blanks only keeps "5 min 40 s" on one line: its blanks are no-break ones.
-    return textwrap.wrap(text, WIDTH, initial_indent=" " * by, subsequent_indent=" " * (by + 2)) or [""]
+    lines = textwrap.wrap(
+        text,
+        WIDTH,
+        initial_indent=" " * by,
+        subsequent_indent=" " * (by + 2),
+        break_on_hyphens=False,
+    )
+    return lines or [""]

@@ -16,6 +16,7 @@ from builder.cli.options import (
     progress,
     stop_on_errors,
 )
+from builder.pages.shipped_files import MKDOCS_FILE
 
 
 @click.command()
@@ -33,6 +34,7 @@ def site(lab: Path, as_of: datetime.date | None, out: Path | None) -> None:
     """
     from builder.mkdocs_plugin import build_site
 
+    _require_host_settings(lab)
     started = time.monotonic()
     folder = lab / "site" if out is None else out
     problems = build_site(lab, folder, given_day(as_of), progress)
@@ -48,5 +50,14 @@ def preview(lab: Path, address: str) -> None:
     """Show the site at an address of this machine and build it anew when a record changes."""
     from builder.mkdocs_plugin import serve
 
+    _require_host_settings(lab)
     click.echo(f"Open http://{address}/ ; stop with Ctrl-C.", err=True)
     serve(lab, address)
+
+
+def _require_host_settings(lab: Path) -> None:
+    if not (lab / MKDOCS_FILE).is_file():
+        raise click.UsageError(
+            f"there is no {MKDOCS_FILE} in {lab.resolve()}; name the lab's folder with --lab, or start one "
+            "with etchwright new FOLDER"
+        )

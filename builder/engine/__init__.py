@@ -62,6 +62,10 @@ from builder.engine.loss import (
     under_by_timer,
     undercut,
 )
+from builder.engine.mask_needed import (
+    least_mask,
+    mask_loss_by_selectivity,
+)
 from builder.engine.next_run import (
     NextRun,
     NextRunKind,
@@ -230,9 +234,11 @@ __all__ = [
     "hartung_knapp_se",
     "individuals_chart",
     "intervals_conflict",
+    "least_mask",
     "leave_one_out",
     "left_censored_normal",
     "loss",
+    "mask_loss_by_selectivity",
     "mean_depth_at",
     "mean_interval",
     "moderated",

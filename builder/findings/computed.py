@@ -12,7 +12,9 @@ from builder.findings.plan.evidence import NOTHING, Asked, Etching, Evidence, ev
 from builder.findings.plan.facts import EtchantFacts, PlanFacts
 from builder.findings.plan.gather import gather, reference_only
 from builder.findings.plan.gather_etchants import etchant_facts
+from builder.records.etches import Etch
 from builder.records.lab import LabRecords
+from builder.records.terms import Origin
 
 
 @dataclass(frozen=True)
@@ -56,9 +58,9 @@ class Computed:
     def by_recipe(self) -> Mapping[str, Mapping[str, Evidence]]:
         """Evidence of films in each recipe."""
         return {
-            etch_id: _evidence_of(self.facts, self.etching(etch_id), self.asked, (*self.own[etch_id], *recipe.targets))
-            for etch_id, recipe in self.facts.etches.items()
-        }  # fmt: skip
+            etch_id: _evidence_of(self.facts, self.etching(etch_id), self.asked, tuple(self.own[etch_id]))
+            for etch_id in self.facts.etches
+        }
 
     @cached_property
     def by_etchant(self) -> Mapping[str, Mapping[str, Evidence]]:
@@ -75,17 +77,25 @@ def compute(records: LabRecords, today: datetime.date) -> Computed:
     facts = gather(records, today)
     published = reference_only(records)
     etchants = {
-        id: etchant_facts(published, etchant) for id, etchant in sorted(published.etchants.items())
+        id: etchant_facts(published, published.etchants[id]) if _has_own_facts(records, id) else found
+        for id, found in facts.etchants.items()
     }
     return Computed(
         today=today,
         facts=facts,
         reference=replace(facts, etchants=etchants, etches={}, refused={}),
-        own={
-            etch.id: {film: rate for film in films_run(records, etch) if (rate := own_rate(records, etch, film))}
-            for etch in records.etches.values()
-        },
-    )  # fmt: skip
+        own={etch.id: _own(records, etch) for etch in records.etches.values()},
+    )
+
+
+def _own(records: LabRecords, etch: Etch) -> dict[str, OwnRate]:
+    rates = ((film, own_rate(records, etch, film)) for film in films_run(records, etch))
+    return {film: rate for film, rate in rates if rate is not None}
+
+
+def _has_own_facts(records: LabRecords, etchant: str) -> bool:
+    facts = (*records.rates.get(etchant, ()), *records.statements.get(etchant, ()))
+    return any(fact.origin is Origin.LAB for fact in facts)
 
 
 def _evidence_of(

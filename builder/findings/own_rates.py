@@ -128,15 +128,24 @@ def _series_start(events: Sequence[tuple[datetime.date, str]]) -> datetime.date 
     return events[-1][0] if events else None
 
 
-def _grouped(etch: Etch, film: str, rows: Iterable[Run]) -> list[tuple[tuple[Run, ...], RunRate, LineFit | None]]:
+def _grouped(
+    etch: Etch, film: str, rows: Iterable[Run]
+) -> list[tuple[tuple[Run, ...], RunRate, LineFit | None]]:
     by_wafer: dict[tuple[datetime.date, str], list[Run]] = {}
     for row in rows:
         by_wafer.setdefault((row.date, row.wafer), []).append(row)
-    induction_s = etch.induction.number if etch.induction is not None and film in etch.targets else 0.0
+    induction_s = _wait(etch, film)
     return [
         (tuple(wafer), *_rate_of(wafer, induction_s))
         for _, wafer in sorted(by_wafer.items(), key=lambda item: item[0])
     ]
+
+
+def _wait(etch: Etch, film: str) -> float:
+    """Time to take off a run's: the wait before a target is etched, less what goes on in transfer, s."""
+    transfer = 0.0 if etch.transfer_time is None else etch.transfer_time.number
+    waits = etch.induction is not None and film in etch.targets
+    return (etch.induction.number if waits and etch.induction is not None else 0.0) - transfer
 
 
 def _rate_of(wafer: Sequence[Run], induction_s: float) -> tuple[RunRate, LineFit | None]:

@@ -27,7 +27,7 @@ class FoundSelectivity:
 
 
 def recipe_selectivity(computed: Computed, etch_id: str, target: str, other: str) -> FoundSelectivity | None:
-    """Return the selectivity of a recipe: pair by pair where wafers carried both films, else from the rates."""
+    """Return a recipe's selectivity: pair by pair where wafers carried both films, else from the rates."""
     own = computed.own[etch_id]
     if target in own and other in own:
         paired = _from_pairs(own[target], own[other], computed.confidence)
@@ -37,7 +37,7 @@ def recipe_selectivity(computed: Computed, etch_id: str, target: str, other: str
 
 
 def rate_selectivity(target: Evidence, other: Evidence) -> FoundSelectivity | None:
-    """Return the selectivity from two separate rates: each end takes the worst of both; None without a number."""
+    """Return the selectivity of two separate rates, each end by the worst of both; None without a number."""
     t, o = target.band, other.band
     if t is None or o is None:
         return None

@@ -37,9 +37,9 @@ def _figure(name: str, caption: str) -> str:
     svg = Markup(
         _svg(name).replace("<svg ", f'<svg class="ew-drawn" role="img" aria-labelledby="{words}" ', 1)
     )
-    return Markup('<figure class="ew-figure" tabindex="0">{}<figcaption id="{}">{}</figcaption></figure>').format(
-        svg, words, Markup(caption)
-    )
+    return Markup(
+        '<figure class="ew-figure" tabindex="0">{}<figcaption id="{}">{}</figcaption></figure>'
+    ).format(svg, words, Markup(caption))
 
 
 @cache

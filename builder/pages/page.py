@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
+
 @dataclass(frozen=True)
 class Heading:
     """A heading of a page that can be linked to; `level` 2 is right below the title."""

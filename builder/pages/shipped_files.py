@@ -21,6 +21,11 @@ def find_mkdocs_file(lab_dir: Path) -> Path:
     return own.resolve()
 
 
+def find_shipped_mkdocs_file() -> Path:
+    """Return the host settings that come with the program, from which those of a new lab are made."""
+    return _find(MKDOCS_FILE)
+
+
 def find_theme() -> Path:
     """Return the folder with the parts of the theme that we change."""
     return Path(__file__).resolve().parent / "theme"

@@ -54,7 +54,8 @@ def _pages(records: LabRecords, today: date) -> Iterator[Page]:
     for etchant in records.etchants.values():
         yield render_page("etchant", etchant_page(records, etchant))
     for chemical in records.chemicals.values():
-        yield render_page("chemical", chemical_page(records, chemical))
+        view_of_chemical = chemical_page(records, chemical)
+        yield render_page("chemical", view_of_chemical, view_of_chemical.found_as)
     for tool in records.tools.values():
         yield render_page("tool", tool_page(records, tool))
     yield from _safety_pages(records)

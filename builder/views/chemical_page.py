@@ -23,6 +23,7 @@ class ChemicalPage:
     title: str
     description: str
     search_text: str
+    found_as: str
     safety: SafetyStrip
     tables: SafetyTables
     sheet: Link
@@ -44,6 +45,7 @@ def chemical_page(records: LabRecords, chemical: Chemical) -> ChemicalPage:
         title=chemical.name,
         description=f"{chemical.name}: hazards, exposure limits, containers, what it must not meet.",
         search_text=" ".join((chemical.id, *chemical.synonyms, chemical.formula or "", *chemical.cas)),
+        found_as=" ".join((chemical.name, *chemical.cas)),
         safety=chemical_strip(records, chemical),
         tables=chemical_tables(records, chemical),
         sheet=Link("Bench sheet to print", sheet_url(chemical.id)),

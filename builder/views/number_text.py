@@ -98,6 +98,17 @@ def percent_text(fraction: float | None) -> str:
     return UNKNOWN if fraction is None else _joined(_significant(fraction * 100.0, _FEWEST_DIGITS), "%")
 
 
+def share_text(fraction: float) -> str:
+    """Return a fraction that somebody wrote down as percent, with all its digits."""
+    shown = (Decimal(repr(fraction)) * 100).normalize()
+    return _joined(format(shown, "f"), "%")
+
+
+def fixed_text(value: float, places: int) -> str:
+    """Return a number to so many decimal places."""
+    return _placed(value, places, Rounding.NEAREST)
+
+
 def temperature_text(temperature_k: float | None) -> str:
     """Return a temperature given in K as whole degrees Celsius, or "unknown"."""
     if temperature_k is None:

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Callable, Mapping
+from collections.abc import Callable, Mapping, Sequence
 
 from builder.engine import Ground, Rank, Verdict
 from builder.findings.plan.result import (
@@ -62,7 +62,9 @@ _CAPS: dict[str, _Sentence] = {
         + ("" if p["stop_s"] is None else f", and the etch may take {_time(p, 'stop_s')}")
     ),
     CapCode.BACK: lambda p: "what covers the back is not stated, and the back is wet from the start",
-    CapCode.BARRIER: lambda p: f"{p['film']} is not known to be dense; what etches may pass it to {p['under']}",
+    CapCode.BARRIER: lambda p: (
+        f"{p['film']} is not known to be dense; what etches may pass it to {p['under']}"
+    ),
     CapCode.CARRIER_LOAD: lambda p: f"the carrier is bare {p['film']} too, and no run had such a load",
     CapCode.CONFLICT: lambda p: "one own run contradicts the literature",
     CapCode.COUPLE: lambda p: f"{p['one']} and {p['other']} are wet together; no record of that couple",
@@ -81,8 +83,12 @@ _CAPS: dict[str, _Sentence] = {
     CapCode.PUBLISHED_CHAMBER: lambda p: "the number is from another chamber, and this one has no own run",
     CapCode.THROUGH_WAFER: lambda p: "etching through the wafer needs a carrier or a film to stop on",
     CapCode.UNDER_NOBLE: lambda p: f"{p['layer']} is usual under {p['film']}; what lies there is not stated",
-    CapCode.UNDERCUT_ASSUMED: lambda p: "the undercut is a rule of thumb here; this recipe has none on record",
-    CapCode.UNDERCUT_UNKNOWN: lambda p: "how far the edge moves is not on record, and a line width is asked for",
+    CapCode.UNDERCUT_ASSUMED: lambda p: (
+        "the undercut is a rule of thumb here; this recipe has none on record"
+    ),
+    CapCode.UNDERCUT_UNKNOWN: lambda p: (
+        "how far the edge moves is not on record, and a line width is asked for"
+    ),
 }
 
 LIFTS: dict[str, str] = {
@@ -119,11 +125,11 @@ _LOST: dict[str, _Sentence] = {
 }
 
 _NOTES: dict[str, _Sentence] = {
-    NoteCode.NOT_A_TARGET: lambda p: f"The recipe is not meant for {p['film']}; its rate is on record all the same.",
+    NoteCode.NOT_A_TARGET: lambda p: f"The recipe is not meant for {p['film']}; its rate is on record.",
     NoteCode.DRAFT: lambda p: "The recipe is a draft: nobody has called it proven.",
     NoteCode.CONFLICT: lambda p: "Own runs and the literature contradict each other; the own runs count.",
     NoteCode.FAR: lambda p: "Own runs were at another temperature and do not count here.",
-    NoteCode.ALL_TEMPERATURES: lambda p: "No temperature is asked for: the rates span all that are on record.",
+    NoteCode.ALL_TEMPERATURES: lambda p: "No temperature is asked for: the rates span all on record.",
     NoteCode.TIME_OUTSIDE_RUNS: lambda p: (
         f"The runs lasted {_time(p, 'low_s')} to {_time(p, 'high_s')}; up to {_time(p, 'stop_s')} nobody has "
         "shown that the rate stays the same."
@@ -178,7 +184,22 @@ def reason(row: FilmRow) -> str:
         return _LOST[row.lost.code](row.lost.params)
     if any(cap.code == CapCode.BACK for cap in row.caps):
         return cap_words(next(cap for cap in row.caps if cap.code == CapCode.BACK))
-    return "; ".join([_ground(row), *(cap_words(cap) for cap in row.caps)])
+    # What keeps a film from "holds" says nothing where the word is worse anyhow.
+    caps = row.caps if row.verdict is Verdict.BORDERLINE else ()
+    couples = [cap for cap in caps if cap.code == CapCode.COUPLE]
+    others = [cap_words(cap) for cap in caps if cap.code != CapCode.COUPLE]
+    return "; ".join([_ground(row), *([couple_words(row.film, couples)] if couples else []), *others])
+
+
+def couple_words(film: str, couples: Sequence[Remark]) -> str:
+    """Return one clause for all couples of a film that have no record."""
+    partners = sorted({str(cap.params[side]) for cap in couples for side in ("one", "other")} - {film})
+    return f"wet together with {listed(partners)}, and no record of that couple"
+
+
+def listed(names: Sequence[str]) -> str:
+    """Return names as a list in words: a, b and c."""
+    return names[0] if len(names) == 1 else f"{', '.join(names[:-1])} and {names[-1]}"
 
 
 def _ground(row: FilmRow) -> str:

@@ -2,12 +2,22 @@
 
 from __future__ import annotations
 
+from builder.engine import Ground
 from builder.findings.plan.result import FilmRow
 from builder.records.terms import FilmFamily, Role
 from builder.views.number_text import time_text
 
+_SETTLED_BY_TEST = frozenset(
+    {Ground.BEYOND_TESTED_TIME, Ground.NO_EVIDENCE, Ground.NO_HIGH_END, Ground.STRADDLES, Ground.UNCHECKED}
+)
+
 TEST_S = 600.0
 """Ten minutes: long enough to see a nanometre a minute, short enough to be done today."""
+
+
+def needs_test_piece(row: FilmRow) -> bool:
+    """Tell whether a measurement of the film would settle its word: what is not stated is settled by stating it."""
+    return not row.rank.can_hold or row.ground in _SETTLED_BY_TEST
 
 
 def test_time_s(row: FilmRow) -> float:
@@ -19,8 +29,9 @@ def test_time_s(row: FilmRow) -> float:
 
 def test_piece_words(row: FilmRow, family: FilmFamily | None = None) -> str:
     """Return the test that would settle a film's word."""
-    where = "as a mask on the same film, " if row.role is Role.MASK else ""
-    return f"etch a test piece of {row.film}, {where}for {time_text(test_time_s(row))} and read {gauge_words(family)}"
+    where = " on the same film as here" if row.role is Role.MASK else ""
+    time = time_text(test_time_s(row))
+    return f"etch a test piece of {row.film}{where} for {time} and read {gauge_words(family)}"
 
 
 def gauge_words(family: FilmFamily | None) -> str:

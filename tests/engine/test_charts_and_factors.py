@@ -1,4 +1,6 @@
-"""Control charts and sample sizes, by second routes: simulation, written-out sums, scipy.stats, statsmodels."""
+"""
+Control charts and sample sizes, by second routes: simulation, written-out sums, scipy.stats, statsmodels.
+"""
 
 from __future__ import annotations
 
@@ -30,7 +32,9 @@ SETTINGS = settings(max_examples=60, deadline=None, derandomize=True)
 @given(VALUES, st.floats(0.05, 1))
 @SETTINGS
 def test_ewma_is_its_weighted_sum_written_out(values: list[float], weight: float) -> None:
-    """Second route: (1 - w)^n target + w sum (1 - w)^(n - i) x_i; the limits from the variance of that sum."""
+    """
+    Second route: (1 - w)^n target + w sum (1 - w)^(n - i) x_i; the limits from the variance of that sum.
+    """
     last = ewma_chart(values, 1.0, 2.0, weight, 3.0)[-1]
     n = len(values)
     weights = [weight * (1 - weight) ** (n - 1 - i) for i in range(n)]
@@ -64,7 +68,10 @@ def test_tolerance_factors_hold_their_content_as_often_as_stated(
 ) -> None:
     """Simulation (seeded, 200,000): one-sided exact; two-sided by Howe within 0.5 %."""
     rng = np.random.default_rng(802)
-    means, deviations = rng.standard_normal(200_000) / math.sqrt(n), np.sqrt(rng.chisquare(n - 1, 200_000) / (n - 1))
+    means, deviations = (
+        rng.standard_normal(200_000) / math.sqrt(n),
+        np.sqrt(rng.chisquare(n - 1, 200_000) / (n - 1)),
+    )
     one = stats.norm.cdf(means + tolerance_factor_one_sided(n, content, confidence) * deviations) >= content
     half = tolerance_factor_two_sided(n, content, confidence) * deviations
     two = stats.norm.cdf(means + half) - stats.norm.cdf(means - half) >= content
@@ -86,7 +93,10 @@ def test_bound_without_failures_is_clopper_pearson(n: int) -> None:
 
 @pytest.mark.parametrize("effect", [0.4, 0.7, 1.0, 2.0])
 def test_number_of_runs_has_the_power_asked_for(effect: float) -> None:
-    """Second route: the exact one-sided t power of statsmodels; the quantile formula is within one run of it."""
+    """
+    Second route: the exact one-sided t power of statsmodels; the quantile formula is within one run of
+    it.
+    """
     n = runs_to_see(effect, 1.0, 0.05, 0.10)
     power = TTestPower()
     assert power.power(effect, n + 1, 0.05, alternative="larger") >= 0.90

@@ -1,9 +1,9 @@
 """
 The promise of the planning interval, measured: 90 % of next runs fall inside, for every number of runs.
 
-Simulated labs of known truth (bench/lab_simulation.py, seeded; the full table is `python -m bench.coverage --full`).
-The bins are judged by the mean chance of the next run to fall inside, whose standard uncertainty is asserted
-to be small against the width of the band, so that an estimator two points off fails; two that are off are shown to.
+Simulated labs of known truth, seeded; `python -m bench.coverage --full` prints the whole table.
+The bins are judged by the mean chance of the next run to fall inside. Its standard uncertainty is asserted to
+be small against the width of the band, so that an estimator two points off fails; two such are shown to fail.
 """
 
 from __future__ import annotations
@@ -24,7 +24,7 @@ RUN_COUNTS = range(1, MOST_RUNS + 1)
 MOST_U = 0.004
 """Largest standard uncertainty of a bin: a fifth of the distance from 90 % to either end of the band."""
 
-# The corners in which the prior misleads most: too narrow a prior for unlike recipes, too wide for alike ones.
+# Where the prior misleads most: too narrow a prior for unlike recipes, too wide a one for alike recipes.
 LOW_CORNER = Scenario("low", 20, 4.0, 1 / FACTOR)
 HIGH_CORNER = Scenario("high", 20, 10.0, FACTOR)
 
@@ -57,7 +57,9 @@ def test_counted_hits_agree_with_the_chances(low_corner: Tally) -> None:
     """Second route: next runs drawn and counted; each bin within four binomial standard errors."""
     for k in RUN_COUNTS:
         p = low_corner.mean_chance(k)
-        assert low_corner.coverage(k) == pytest.approx(p, abs=4 * math.sqrt(p * (1 - p) / low_corner.tried[k]))
+        assert low_corner.coverage(k) == pytest.approx(
+            p, abs=4 * math.sqrt(p * (1 - p) / low_corner.tried[k])
+        )
 
 
 @pytest.mark.parametrize("recipes", [6, 9, 14])

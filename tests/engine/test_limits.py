@@ -14,7 +14,9 @@ SETTINGS = settings(max_examples=80, deadline=None, derandomize=True)
 
 
 def test_currie_risks_are_five_percent_each() -> None:
-    """Simulation (seeded, 400,000): no loss is called one, and a loss at the detection limit missed, in 5 %."""
+    """
+    Simulation (seeded, 400,000): no loss is called one, and a loss at the detection limit missed, in 5 %.
+    """
     rng = np.random.default_rng(600)
     limits = currie(1.0, paired=True)
     noise = rng.standard_normal(400_000) - rng.standard_normal(400_000)
@@ -86,7 +88,9 @@ def test_more_unseen_values_lower_the_mean(n_below: int) -> None:
 @given(st.floats(-100, 100), st.floats(0.01, 50), st.floats(1, 1e5))
 @SETTINGS
 def test_a_limit_is_never_zero(loss: float, u: float, time: float) -> None:
-    """A gain is no evidence of growth: the limit stays at 1.645 u over the time, and longer tests lower it."""
+    """
+    A gain is no evidence of growth: the limit stays at 1.645 u over the time, and longer tests lower it.
+    """
     limit = run_limit(loss, u, time)
     assert limit >= 1.645 * u / time * (1 - 1e-12)
     assert limit >= loss / time

@@ -122,7 +122,9 @@ def test_order_of_points_does_not_matter(order: list[int]) -> None:
 
 @given(st.floats(0.5, 2.5), st.floats(0.01, 0.5), st.floats(0, 20))
 @SETTINGS
-def test_more_confidence_or_scatter_never_narrows_the_time(quantile: float, more: float, u_new: float) -> None:
+def test_more_confidence_or_scatter_never_narrows_the_time(
+    quantile: float, more: float, u_new: float
+) -> None:
     """Limits nest: a higher quantile or a less repeatable run gives wider limits about the same time."""
     fit = fit_line(TIMES, DEPTHS, U)
     inner = time_to_depth(fit, 450, quantile, u_new_nm=u_new)

@@ -146,8 +146,8 @@ def test_more_confidence_never_narrows(
 def test_units_of_rate_do_not_matter(measured: list[RunRate], lab: Spread, shift: float) -> None:
     """Rates in another unit shift all three logarithms alike and nothing else."""
     one = predict_next_run(measured, lab, 0.90)
-    other = predict_next_run([RunRate(r.log_rate + shift, r.u_log) for r in measured if r.log_rate is not None],
-                             lab, 0.90)  # fmt: skip
+    moved = [RunRate(r.log_rate + shift, r.u_log) for r in measured if r.log_rate is not None]
+    other = predict_next_run(moved, lab, 0.90)
     assert other.log_hi == pytest.approx(one.log_hi + shift, abs=1e-9)
     assert other.log_mid == pytest.approx((one.log_mid or 0) + shift, abs=1e-9)
     assert other.s_tilde == pytest.approx(one.s_tilde, rel=1e-9)
@@ -190,7 +190,9 @@ def test_only_limits_have_no_low_end_and_no_middle(limits: list[float], lab: Spr
 
 
 def test_a_run_that_says_nothing_takes_the_low_end_away() -> None:
-    """A run without any visible loss and without a limit contradicts a low end; it is counted, not dropped."""
+    """
+    A run without any visible loss and without a limit contradicts a low end; it is counted, not dropped.
+    """
     found = predict_next_run([*_runs([0.0, 0.05]), RunRate(None)], LAB, 0.90)
     assert found.log_lo is None
     assert found.n_unknown == 1

@@ -32,7 +32,10 @@ SETTINGS = settings(max_examples=60, deadline=None, derandomize=True)
 
 @pytest.mark.parametrize("count", range(3, 13))
 def test_pooled_means_agree_with_statsmodels(count: int) -> None:
-    """Fixed effect, DerSimonian-Laird, Paule-Mandel, Hartung-Knapp: statsmodels finds the same (seeded runs)."""
+    """
+    Fixed effect, DerSimonian-Laird, Paule-Mandel, Hartung-Knapp: statsmodels finds the same (seeded
+    runs).
+    """
     rng = np.random.default_rng(300 + count)
     # Spread well above the uncertainties: statsmodels lets tau^2 fall below 0, we do not.
     values, u = 100 + 12 * rng.standard_normal(count), rng.uniform(1, 4, count)
@@ -53,7 +56,9 @@ def test_pooled_means_agree_with_statsmodels(count: int) -> None:
 @given(RUNS)
 @SETTINGS
 def test_paule_mandel_solves_its_own_equation(runs: tuple[list[float], list[float]]) -> None:
-    """With the estimate put in, the weighted scatter is k - 1; else it is 0 and the scatter is already less."""
+    """
+    With the estimate put in, the weighted scatter is k - 1; else it is 0 and the scatter is already less.
+    """
     found = paule_mandel(runs[0], runs[1])
     values, weight = np.asarray(runs[0]), 1 / (np.square(runs[1]) + found.tau2)
     q = (weight * (values - np.average(values, weights=weight)) ** 2).sum()

@@ -69,7 +69,12 @@ def test_noncentral_t_quantile_agrees_with_scipy_stats(p: float, df: float, shif
 @pytest.mark.parametrize("p", [0.0, 1.0, -0.1, 1.1, math.nan])
 def test_a_probability_outside_zero_to_one_is_refused(p: float) -> None:
     """The refusal names variable and value."""
-    for call in (normal, lambda q: student_t(q, 3), lambda q: chi_squared(q, 3), lambda q: noncentral_t(q, 3, 1)):
+    for call in (
+        normal,
+        lambda q: student_t(q, 3),
+        lambda q: chi_squared(q, 3),
+        lambda q: noncentral_t(q, 3, 1),
+    ):
         with pytest.raises(DomainError, match="p = "):
             call(p)
 

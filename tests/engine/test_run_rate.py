@@ -34,7 +34,9 @@ def test_the_limit_is_exceeded_once_in_twenty() -> None:
     assert (readings < 2).mean() == pytest.approx(0.05, abs=0.0015)
 
 
-@given(st.floats(0, 1000), st.floats(0, 1000), st.floats(1, 1e4), st.none() | st.floats(0, 50), st.floats(0, 50))
+@given(
+    st.floats(0, 1000), st.floats(0, 1000), st.floats(1, 1e4), st.none() | st.floats(0, 50), st.floats(0, 50)
+)
 @SETTINGS
 def test_a_run_says_one_thing(
     before: float, after: float, time: float, u_before: float | None, u_after: float
@@ -58,7 +60,10 @@ def test_units_do_not_matter(loss: float, u: float, length: float, time: float) 
     """The same run in other units gives the same relative uncertainty and the scaled rate or limit."""
     one = run_rate(500, 500 - loss, 60, u, u)
     other = run_rate(500 * length, (500 - loss) * length, 60 * time, u * length, u * length)
-    for mine, theirs in ((one.rate_nm_per_s, other.rate_nm_per_s), (one.limit_nm_per_s, other.limit_nm_per_s)):
+    for mine, theirs in (
+        (one.rate_nm_per_s, other.rate_nm_per_s),
+        (one.limit_nm_per_s, other.limit_nm_per_s),
+    ):
         assert (mine is None) == (theirs is None)
         if mine is not None and theirs is not None:
             assert theirs == pytest.approx(mine * length / time, rel=1e-9)

@@ -48,7 +48,9 @@ def test_fieller_limits_agree_with_monte_carlo() -> None:
 
 @given(st.floats(1, 1000), st.floats(1, 100), st.floats(0.001, 2), st.floats(0.001, 2), st.floats(0.5, 3))
 @SETTINGS
-def test_fieller_limits_enclose_the_ratio(a: float, b: float, u_a: float, u_b: float, quantile: float) -> None:
+def test_fieller_limits_enclose_the_ratio(
+    a: float, b: float, u_a: float, u_b: float, quantile: float
+) -> None:
     """Bounded limits lie about the ratio; unbounded exactly when the denominator may be 0 (g >= 1)."""
     found = fieller_ratio(a, b, u_a**2, u_b**2, 0.0, quantile)
     assert found.bounded == (found.g < 1)
@@ -89,7 +91,9 @@ def test_selectivity_is_the_inverse_ratio_turned_over() -> None:
     ratio = predict_next_run([RunRate(-2.0, u), RunRate(-1.9, u)], LAB, 0.90)
     found = paired_selectivity(target, mask, LAB, 0.90)
     assert ratio.log_lo is not None
-    assert [found.lo, found.hi] == pytest.approx([math.exp(-ratio.log_hi), math.exp(-ratio.log_lo)], rel=1e-12)
+    assert [found.lo, found.hi] == pytest.approx(
+        [math.exp(-ratio.log_hi), math.exp(-ratio.log_lo)], rel=1e-12
+    )
 
 
 def test_a_mask_without_loss_gives_only_a_lower_bound() -> None:
@@ -133,7 +137,9 @@ def test_a_numerator_that_may_be_zero_has_not_even_a_lower_limit() -> None:
 
 @given(END, END, END, END)
 @SETTINGS
-def test_conflict_means_no_common_point(a: float | None, b: float | None, c: float | None, d: float | None) -> None:
+def test_conflict_means_no_common_point(
+    a: float | None, b: float | None, c: float | None, d: float | None
+) -> None:
     """Symmetric; never from an unknown end; exactly when no number lies in both intervals."""
     own = (a, b) if a is None or b is None or a <= b else (b, a)
     published = (c, d) if c is None or d is None or c <= d else (d, c)

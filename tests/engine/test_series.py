@@ -43,7 +43,9 @@ def test_trend_agrees_with_scipy_stats(logs: list[float]) -> None:
 
 
 def test_steady_tools_raise_a_trend_once_in_twenty() -> None:
-    """Without drift a slope is called significant in 5 % of series (seeded; three standard errors are 1 %)."""
+    """
+    Without drift a slope is called significant in 5 % of series (seeded; three standard errors are 1 %).
+    """
     rng = np.random.default_rng(500)
     found = [find_trend(list(range(8)), rng.standard_normal(8).tolist()) for _ in range(4_000)]
     share = sum(trend is not None and trend.significant for trend in found) / 4_000

@@ -77,6 +77,9 @@ def test_no_function_is_too_long() -> None:
 
 def test_the_checks_see_what_they_look_for() -> None:
     """A stray number and a long function are noticed."""
-    assert list(_numbers("def f(x):\n    return 1.645 * x + 2")) in ([(2, 1.645), (2, 2)], [(2, 2), (2, 1.645)])
+    assert list(_numbers("def f(x):\n    return 1.645 * x + 2")) in (
+        [(2, 1.645), (2, 2)],
+        [(2, 2), (2, 1.645)],
+    )
     long = "def f():\n" + "    x = 1\n" * 61
     assert [name for _, name, _ in _long_functions(long)] == ["f"]

@@ -1,4 +1,6 @@
-"""The spread learned over a lab: Smyth's estimator by another route, its limits, and what it must never do."""
+"""
+The spread learned over a lab: Smyth's estimator by another route, its limits, and what it must never do.
+"""
 
 from __future__ import annotations
 
@@ -106,7 +108,8 @@ def test_the_prior_weighs_less_in_a_larger_lab() -> None:
     """
     Recipes that all spread by 12 % pull a prior of 6 % towards themselves, the more the more they are.
 
-    By hand: the mean of ln(s^2) lies 1 - gamma - ln 2 below ln(sigma^2) for 4 df, so the limit is 0.12 exp(0.1352).
+    By hand: the mean of ln(s^2) lies 1 - gamma - ln 2 below ln(sigma^2) for 4 df, so the limit is 0.12
+    exp(0.1352).
     """
     pulled = [fit_spread([0.0144] * n, [4] * n, PRIOR).s0 for n in (4, 8, 16, 64, 512)]
     assert pulled == sorted(pulled)
@@ -116,7 +119,9 @@ def test_the_prior_weighs_less_in_a_larger_lab() -> None:
 
 @given(LABS, st.floats(0.01, 100))
 @SETTINGS
-def test_scaling_all_spreads_scales_s0_and_keeps_d0(lab: tuple[list[float], list[int]], factor: float) -> None:
+def test_scaling_all_spreads_scales_s0_and_keeps_d0(
+    lab: tuple[list[float], list[int]], factor: float
+) -> None:
     """A lab twice as unsteady, with a prior twice as wide, has twice the s0 and the same d0."""
     one = fit_spread(lab[0], lab[1], PRIOR)
     other = fit_spread([s2 * factor**2 for s2 in lab[0]], lab[1], SpreadPrior(0.06 * factor, 4))
@@ -130,7 +135,10 @@ def test_order_of_recipes_does_not_matter(lab: tuple[list[float], list[int]], ra
     """The recipes may be listed in any order."""
     order = list(range(len(lab[0])))
     random.shuffle(order)  # type: ignore[attr-defined]
-    one, other = fit_spread(*lab, PRIOR), fit_spread([lab[0][i] for i in order], [lab[1][i] for i in order], PRIOR)
+    one, other = (
+        fit_spread(*lab, PRIOR),
+        fit_spread([lab[0][i] for i in order], [lab[1][i] for i in order], PRIOR),
+    )
     assert other.s0 == pytest.approx(one.s0, rel=1e-9)
     assert other.d0 == pytest.approx(one.d0, rel=1e-6)
 
@@ -157,7 +165,9 @@ def test_moderation_by_hand() -> None:
     lab = Spread(0.06, 4, 20, from_prior=False)
     assert moderated(0.009, 2, lab) == pytest.approx((0.0054, 6))
     assert moderated(None, 0, lab) == pytest.approx((0.0036, 4))
-    assert moderated(0.009, 2, Spread(0.06, math.inf, 0, from_prior=True)) == pytest.approx((0.0036, math.inf))
+    assert moderated(0.009, 2, Spread(0.06, math.inf, 0, from_prior=True)) == pytest.approx(
+        (0.0036, math.inf)
+    )
 
 
 @given(st.floats(0, 0.1), st.integers(1, 40), st.floats(0.01, 0.3), st.floats(0.1, 200))

@@ -33,8 +33,9 @@ def couplings(reach: Reaching, found: list[Case]) -> Coupling:
     plan_caps: list[Remark] = []
     notes: list[Remark] = []
     wet = sorted({*kept, target, *(film.film for film in _later_targets(reach))})
+    supposed = _supposed(found)
     for pair in combinations(wet, 2):
-        if not _is_battery(reach.facts, pair):
+        if not _is_battery(reach.facts, pair) or supposed.issuperset(pair):
             continue
         record = couple_of(reach.facts, pair, reach.etching.etchant.id)
         if record is None:
@@ -48,12 +49,18 @@ def couplings(reach: Reaching, found: list[Case]) -> Coupling:
     return Coupling(result.caps, result.lost, tuple(plan_caps), tuple(notes))
 
 
+def _supposed(found: list[Case]) -> set[str]:
+    """Adhesion layers that may lie under a noble metal: one or another of them, so never a pair."""
+    named = {case.film.film for case in found if not case.film.assumed}
+    return {
+        case.film.film for case in found if any(cap.code == CapCode.UNDER_NOBLE for cap in case.caps)
+    } - named
+
+
 def couple_of(facts: PlanFacts, pair: tuple[str, str], etchant: str) -> CoupleFact | None:
     """Return the record of two films in an etchant, whichever is named first; the gravest of several."""
     records = [
-        couple
-        for couple in facts.couples
-        if set(couple.films) == set(pair) and etchant in couple.etchants
+        couple for couple in facts.couples if set(couple.films) == set(pair) and etchant in couple.etchants
     ]
     gravity = {CoupleEffect.NONE: 0, CoupleEffect.UNDERCUT: 1, CoupleEffect.ATTACKS: 2}
     return max(records, key=lambda couple: gravity[couple.effect], default=None)

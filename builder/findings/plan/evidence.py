@@ -28,7 +28,9 @@ from builder.findings.plan.facts import (
 )
 from builder.records.terms import Effect
 
-_ADVERSE = frozenset({Effect.PEELS, Effect.SWELLS, Effect.ROUGHENS, Effect.CRACKS, Effect.OXIDISES, Effect.RESIDUE})
+_ADVERSE = frozenset(
+    {Effect.PEELS, Effect.SWELLS, Effect.ROUGHENS, Effect.CRACKS, Effect.OXIDISES, Effect.RESIDUE}
+)
 
 
 @dataclass(frozen=True, slots=True)
@@ -160,7 +162,9 @@ def _of_film(facts: PlanFacts, etching: Etching, film: FilmFacts, asked: Asked) 
     if own is not None and not far:
         base = _from_own(own, best, counting, asked)
     elif best is not None:
-        base = replace(best, far=far, all_temperatures=temperature is None and len({r.temperature for r in rows}) > 1)
+        base = replace(
+            best, far=far, all_temperatures=temperature is None and len({r.temperature for r in rows}) > 1
+        )
     elif said:
         base = replace(_from_statements(said), far=far)
     else:
@@ -279,5 +283,3 @@ def _hint(facts: PlanFacts, etching: Etching, film: FilmFacts, rows: Sequence[Pu
         if other.is_family and film.id in other.members and etching.etchant.rows.get(other.id):
             return f"similar:{other.id}"
     return None
-
-

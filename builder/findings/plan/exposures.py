@@ -104,8 +104,13 @@ class Reaching:
 
     @property
     def from_start(self) -> tuple[Exposure | None, Exposure | None]:
-        """Exposure of what is open from the start, by timer and by look."""
-        return open_by_timer(self.timing.schedule), open_by_look(self.timing.schedule, self.timing.cut)
+        """Exposure of what is open from the start, by timer and by look, with the time in transfer."""
+        recipe = self.etching.recipe
+        transfer_s = 0.0 if recipe is None else recipe.transfer_s
+        return (
+            _longer(open_by_timer(self.timing.schedule), transfer_s),
+            _longer(open_by_look(self.timing.schedule, self.timing.cut), transfer_s),
+        )
 
 
 def cases(reach: Reaching) -> list[Case]:
@@ -222,7 +227,9 @@ def _under_noble(reach: Reaching, film: PlanFilm, lies_on: str | None) -> Iterat
         return
     for layer in usual:
         if layer in reach.facts.films:
-            yield _thin_case(reach, layer, (Remark(CapCode.UNDER_NOBLE, {"film": film.film, "layer": layer}),))
+            yield _thin_case(
+                reach, layer, (Remark(CapCode.UNDER_NOBLE, {"film": film.film, "layer": layer}),)
+            )
 
 
 def _back(reach: Reaching) -> Iterator[Case]:
@@ -253,6 +260,13 @@ def _beneath(
         None if timer is None else below(timer, band, thickness, cut, porous=porous),
         None if look is None else below(look, band, thickness, cut, porous=porous),
     )
+
+
+def _longer(exposure: Exposure | None, by_s: float) -> Exposure | None:
+    if exposure is None:
+        return None
+    mid = None if exposure.mid_s is None else exposure.mid_s + by_s
+    return Exposure(exposure.low_s + by_s, mid, exposure.high_s + by_s)
 
 
 def _at_once(exposure: Exposure | None, start: Exposure | None) -> Exposure | None:

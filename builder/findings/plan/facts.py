@@ -147,6 +147,7 @@ class EtchFacts:
     One recipe.
 
     `inherits`: published numbers of its etchant count for it. `temperature` None is not stated.
+    `offset_s` is the wait before etching starts less `transfer_s`, in which it goes on after the clock.
     """
 
     id: str
@@ -159,6 +160,7 @@ class EtchFacts:
     targets: tuple[str, ...]
     phi: float
     offset_s: float
+    transfer_s: float = 0.0
     overetch: float
     endpoint: bool
     cooled: bool

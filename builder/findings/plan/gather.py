@@ -72,7 +72,10 @@ def reference_only(records: LabRecords) -> LabRecords:
 
 
 def _shipped(facts: Mapping[str, tuple[E, ...]]) -> dict[str, tuple[E, ...]]:
-    return {id: tuple(fact for fact in entries if fact.origin is Origin.REFERENCE) for id, entries in facts.items()}
+    return {
+        id: tuple(fact for fact in entries if fact.origin is Origin.REFERENCE)
+        for id, entries in facts.items()
+    }
 
 
 def _film(film: Film) -> FilmFacts:

@@ -84,7 +84,10 @@ def _ends(
 
 def _none_seen(rate: PublishedRate) -> SaidFact:
     return SaidFact(
-        effect=Effect.RESISTS, words="no etching seen", source=rate.source, temperature=span_of(rate.temperature)
+        effect=Effect.RESISTS,
+        words="no etching seen",
+        source=rate.source,
+        temperature=span_of(rate.temperature),
     )
 
 

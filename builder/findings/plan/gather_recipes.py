@@ -24,11 +24,12 @@ def etch_facts(records: LabRecords, etch: Etch, levels: Sequence[float]) -> Etch
     phi = default_phi(defaults, etch.method, gas_bubbles=bool(etchant.gas_bubbles))
     ratio = etch.undercut_ratio
     forbidden, cautions = of_recipe(records, etch)
+    offset_s, transfer_s = _waits(etch, own)
     cycle = etch.seconds_per_cycle
     return EtchFacts(
         id=etch.id, name=etch.name, etchant=etch.etchant, method=etch.method, tool=etch.tool,
         status=etch.status, inherits=_inherits(etch), targets=etch.targets,
-        phi=phi if stated is None else stated, offset_s=_offset(etch, own),
+        phi=phi if stated is None else stated, offset_s=offset_s, transfer_s=transfer_s,
         overetch=0.0 if etch.overetch is None else etch.overetch.number,
         endpoint=etch.endpoint is not None, cooled=etch.cooling is not None,
         isotropic=bool(etchant.isotropic) if etch.isotropic is None else etch.isotropic,
@@ -54,14 +55,22 @@ def _inherits(etch: Etch) -> bool:
     return True
 
 
-def _offset(etch: Etch, own: Mapping[str, OwnRate]) -> float:
-    transfer = 0.0 if etch.transfer_time is None else etch.transfer_time.number
-    if etch.induction is not None:
-        return etch.induction.number + transfer
+def _waits(etch: Etch, own: Mapping[str, OwnRate]) -> tuple[float, float]:
+    """
+    Return the offset of the clock and the time in which etching goes on after it, s.
+
+    The offset is the wait before etching starts less what goes on in transfer. A depth series shows
+    both in one, so it counts only where the recipe states neither.
+    """
+    if etch.induction is not None or etch.transfer_time is not None:
+        induction = 0.0 if etch.induction is None else etch.induction.number
+        transfer = 0.0 if etch.transfer_time is None else etch.transfer_time.number
+        return induction - transfer, transfer
     fitted = [
         rate.induction_s for film in etch.targets if (rate := own.get(film)) and rate.induction_s is not None
     ]
-    return (fitted[0] if fitted else 0.0) + transfer
+    offset = fitted[0] if fitted else 0.0
+    return offset, max(0.0, -offset)
 
 
 def _own(records: LabRecords, rate: OwnRate, levels: Sequence[float]) -> OwnFact | None:

@@ -72,7 +72,10 @@ def of_recipe_by_film(records: LabRecords, etch: Etch) -> dict[str, tuple[GasFac
 
 def of_recipe(records: LabRecords, etch: Etch) -> tuple[tuple[str, ...], tuple[str, ...]]:
     """Return what forbids a recipe on any sample, and what is to be minded on every one."""
-    found = [*situation_findings(records, recipe_situation(records, etch, ())), *recipe_sequence(records, etch)]
+    found = [
+        *situation_findings(records, recipe_situation(records, etch, ())),
+        *recipe_sequence(records, etch),
+    ]
     messages = dict.fromkeys((one.forbidden, one.message) for one in found)
     return (
         tuple(message for forbidden, message in messages if forbidden),

@@ -1,4 +1,4 @@
-"""From an exposure to a word: the loss, what is allowed, what caps it, what loses the film whatever its number."""
+"""From an exposure to a word: the loss, what is allowed, what caps it, what loses a film at any number."""
 
 from __future__ import annotations
 
@@ -41,7 +41,9 @@ class PlanCaps:
     undercut_by_look: Span
 
 
-def judge(reach: Reaching, case: Case, plan: PlanCaps, extra: Sequence[Remark], lost: Remark | None) -> FilmRow:
+def judge(
+    reach: Reaching, case: Case, plan: PlanCaps, extra: Sequence[Remark], lost: Remark | None
+) -> FilmRow:
     """Return the row of one film; `extra` caps and `lost` come from couples."""
     film = reach.film(case.film.film)
     known = reach.evidence(case.film.film)
@@ -249,5 +251,3 @@ def without_offset(exposure: Exposure | None, offset_s: float) -> Exposure | Non
         mid_s=mid,
         high_s=max(0.0, exposure.high_s - offset_s),
     )
-
-

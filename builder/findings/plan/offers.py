@@ -90,7 +90,9 @@ def _other_reasons(
     if hot is not None and sample.hottest_k is not None and hot.high > sample.hottest_k:
         yield Remark(ExcludedCode.TOO_HOT, {"recipe_k": hot.high, "limit_k": sample.hottest_k})
     if asked.temperature_k is not None and hot is not None and not matches(hot, asked.temperature_k):
-        yield Remark(ExcludedCode.OTHER_TEMPERATURE, {"recipe_k": hot.high, "asked_k": asked.temperature_k.high})
+        yield Remark(
+            ExcludedCode.OTHER_TEMPERATURE, {"recipe_k": hot.high, "asked_k": asked.temperature_k.high}
+        )
     for words in recipe.forbidden:
         yield Remark(ExcludedCode.SAFETY, {"words": words})
     for fact in gas_facts(etching, sample, facts.bond_words):

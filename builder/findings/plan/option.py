@@ -219,7 +219,14 @@ def unstated(reach: Reaching, rows: Sequence[FilmRow]) -> Iterator[Remark]:
 def ordered_rows(rows: Iterator[FilmRow]) -> tuple[FilmRow, ...]:
     """Worst first; of the adhesion layers that may lie under one noble metal, only the worst."""
     ordered = sorted(
-        rows, key=lambda row: (-row.verdict.order, -row.verdict_by_look.order, row.role, row.film, row.thickness_nm)
+        rows,
+        key=lambda row: (
+            -row.verdict.order,
+            -row.verdict_by_look.order,
+            row.role,
+            row.film,
+            row.thickness_nm,
+        ),
     )
     kept: list[FilmRow] = []
     noble: set[object] = set()

@@ -113,9 +113,7 @@ def _etch_stage(
     return StagePlan(number, stage.target.film, None, None, options, (*excluded, *clashing))
 
 
-def _treat_stage(
-    facts: PlanFacts, state: _State, step: SequenceStep, asked: Asked, number: int
-) -> StagePlan:
+def _treat_stage(facts: PlanFacts, state: _State, step: SequenceStep, asked: Asked, number: int) -> StagePlan:
     assert step.treat is not None
     if step.etchant is None:
         return StagePlan(number, None, str(step.treat), None, (), ())
@@ -211,5 +209,3 @@ def verdict_of(planned: Plan) -> Verdict:
         if stage.treat is None or stage.etchant is not None
     ]
     return max(words, key=lambda word: word.order, default=Verdict.UNMEASURED)
-
-

@@ -10,6 +10,7 @@ from typing import cast
 from builder.findings.plan.facts import PlanFacts
 from builder.records.conversion import Data, from_data
 
+
 def plain(value: object) -> object:
     """
     Return a fact as JSON-like data; a field that has its default is left out of its object.

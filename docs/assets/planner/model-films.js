@@ -28,14 +28,15 @@
   function reaching(facts, etching, asked, stage, timing) {
     const state = etching.etchant.state;
     const isWet = state === "liquid";
+    const transferS = etching.recipe ? etching.recipe.transfer_s : 0;
     return {
       facts: facts, etching: etching, asked: asked, stage: stage, timing: timing,
       method: etching.recipe ? etching.recipe.method : etching.etchant.method,
       isWet: isWet,
       passesPores: isWet || etching.etchant.hf_vapour,
       reachesBack: isWet || state === "vapour",
-      startTimer: ew.times.openByTimer(timing.schedule),
-      startLook: ew.times.openByLook(timing.schedule, timing.cut),
+      startTimer: longer(ew.times.openByTimer(timing.schedule), transferS),
+      startLook: longer(ew.times.openByLook(timing.schedule, timing.cut), transferS),
     };
   }
 
@@ -216,6 +217,13 @@
     const through = (/** @type {Exposure | null} */ exposure) =>
       exposure === null ? null : ew.times.below(exposure, band, thickness, film.tolerance, phi, porous);
     return [through(timer), through(look)];
+  }
+
+  /** @param {Exposure | null} exposure @param {number} byS @returns {Exposure | null} */
+  function longer(exposure, byS) {
+    if (exposure === null) return null;
+    const mid = exposure.midS === null ? null : exposure.midS + byS;
+    return { lowS: exposure.lowS + byS, midS: mid, highS: exposure.highS + byS };
   }
 
   /** In the worst case from the start. @param {Exposure | null} exposure @param {Exposure | null} start @returns {Exposure | null} */

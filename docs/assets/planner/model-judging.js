@@ -1,0 +1,187 @@
+// @ts-check
+/*
+ * From an exposure to a word: the loss, what is allowed, what caps it, what loses the film whatever its number.
+ * Twin of builder/findings/plan/judging.py.
+ */
+(function (ew) {
+  "use strict";
+
+  const MASK_FAILURES = new Set(["peels", "swells", "cracks"]);
+
+  /** @param {string} method */
+  function inPlasma(method) {
+    return method === "plasma" || method === "cyclic";
+  }
+
+  /**
+   * The row of one film; `extra` caps and `coupleLost` come from couples.
+   * @param {Reach} reach @param {Case} one @param {PlanCaps} plan @param {Remark[]} extra @param {Remark | null} coupleLost
+   * @returns {FilmRow}
+   */
+  function judge(reach, one, plan, extra, coupleLost) {
+    const known = ew.films.known(reach, one.film.film);
+    const allowed = allowedLoss(reach, one);
+    const phi = reach.timing.cut.phi;
+    const word = wordOf(reach, one, one.byTimer, plan.targetRank, allowed);
+    const wordLook = wordOf(reach, one, one.byLook, plan.targetRank, allowed);
+    const lost = coupleLost || lostOf(reach, one, known, plan.undercut);
+    const lostLook = lost && lost.code === "line" ? lineLost(reach, plan.undercutByLook) : lost;
+    const caps = sortedCaps([...one.caps, ...capsOf(reach, one, known, plan), ...plan.caps, ...extra]);
+    return {
+      film: one.film.film, role: one.role, thicknessNm: one.film.thicknessNm, exposure: one.byTimer,
+      exposureByLook: one.byLook,
+      loss: ew.times.loss(known.band, one.byTimer, phi, one.faces),
+      lossByLook: ew.times.loss(known.band, one.byLook, phi, one.faces),
+      allowedNm: allowed, verdict: finalWord(word, caps, lost), verdictByLook: finalWord(wordLook, caps, lostLook),
+      ground: word.ground, groundByLook: wordLook.ground, rank: known.rank, effects: known.adverse, caps: caps,
+      lost: lost, hint: known.hint, assumed: one.film.assumed, spentNm: one.film.spentNm, sources: known.sources,
+    };
+  }
+
+  /** What makes two remarks one, and their order. @param {Remark} remark */
+  function keyOf(remark) {
+    const pairs = Object.keys(remark.params).sort(ew.couples.byCode);
+    return remark.code + "\u0000" + pairs.map((name) => name + "=" + remark.params[name]).join(", ");
+  }
+
+  /** @param {Remark[]} remarks @returns {Remark[]} */
+  function distinctRemarks(remarks) {
+    return Array.from(new Map(remarks.map((one) => [keyOf(one), one])).values());
+  }
+
+  /** @param {Remark[]} caps */
+  function sortedCaps(caps) {
+    return caps.length > 1 ? distinctRemarks(caps).sort((one, other) => ew.couples.byCode(keyOf(one), keyOf(other))) : caps;
+  }
+
+  /** What a film may still lose, nm: as stated, or by the lab's default; null where neither says. @param {Reach} reach @param {Case} one */
+  function allowedLoss(reach, one) {
+    const film = one.film;
+    if (film.spentNm === null) return film.allowedNm === Infinity ? Infinity : null;
+    const stated = film.allowedNm === null ? defaultAllowance(reach, one, film.thicknessNm) : film.allowedNm;
+    return stated === null ? null : Math.max(0, stated - film.spentNm);
+  }
+
+  /** @param {Reach} reach @param {Case} one @param {number} thickness @returns {number | null} */
+  function defaultAllowance(reach, one, thickness) {
+    const rules = reach.facts.defaults.allowance;
+    if (one.film.assumed) return null;
+    if (one.role === "mask") {
+      const organic = ew.films.ORGANIC.has(reach.facts.films[one.film.film].family);
+      return ew.words.allowedMask(thickness, rules, organic && inPlasma(reach.method));
+    }
+    return one.nextToTarget ? ew.words.allowedUnder(thickness, rules) : ew.words.allowedOther(thickness, rules);
+  }
+
+  /** The word of one film; of a family, the worst word of the films that may be meant. @param {Reach} reach @param {Case} one @param {Exposure | null} exposure @param {string} targetRank @param {number | null} allowed @returns {Word} */
+  function wordOf(reach, one, exposure, targetRank, allowed) {
+    const film = reach.facts.films[one.film.film];
+    const members = film.is_family ? ew.evidence.familyMembers(reach.facts, reach.etching, film, reach.asked) : [];
+    const words = [...members, ew.films.known(reach, film.id)].map((known) =>
+      wordOfEvidence(reach, one, exposure, targetRank, allowed, known),
+    );
+    return words.reduce((worst, word) => (ew.words.ORDER[word.verdict] > ew.words.ORDER[worst.verdict] ? word : worst));
+  }
+
+  /** @param {Reach} reach @param {Case} one @param {Exposure | null} exposure @param {string} targetRank @param {number | null} allowed @param {Evidence} known @returns {Word} */
+  function wordOfEvidence(reach, one, exposure, targetRank, allowed, known) {
+    const anyLoss = allowed === Infinity;
+    const grounds = {
+      rank: known.rank, targetRank: targetRank, attacked: known.attacked, adverse: known.adverse.length > 0,
+      limitS: known.limitS,
+    };
+    const lost = ew.times.loss(known.band, exposure, reach.timing.cut.phi, one.faces);
+    return ew.words.filmWord(lost, exposure, grounds, anyLoss ? null : allowed, lostAbove(reach, one), anyLoss);
+  }
+
+  /** A film too thin for a default is not better off than the thinnest one that has a default. @param {Reach} reach @param {Case} one */
+  function lostAbove(reach, one) {
+    const left = Math.max(0, one.film.thicknessNm - (one.film.spentNm || 0));
+    if (one.film.assumed) return left;
+    const ofLeast = defaultAllowance(reach, one, reach.facts.defaults.allowance.none_below_nm);
+    return ofLeast === null ? left : Math.min(left, ofLeast);
+  }
+
+  /** @param {Word} word @param {Remark[]} caps @param {Remark | null} lost */
+  function finalWord(word, caps, lost) {
+    if (lost) return "lost";
+    // What covers the back decides, and nobody said what does: neither safe nor lost.
+    if (caps.some((cap) => cap.code === "back")) return "borderline";
+    return caps.length ? ew.words.capped(word.verdict) : word.verdict;
+  }
+
+  /** @param {Reach} reach @param {Case} one @param {Evidence} known @param {Span} undercut @returns {Remark | null} */
+  function lostOf(reach, one, known, undercut) {
+    if (one.role === "mask") {
+      const failing = known.adverse.find((effect) => MASK_FAILURES.has(effect));
+      if (failing) return ew.films.remark("mask-fails", { effect: failing });
+      const line = lineLost(reach, undercut);
+      if (line) return line;
+    }
+    if (one.film.isCritical && known.adverse.includes("roughens")) return ew.films.remark("roughened");
+    return null;
+  }
+
+  /** A line etched under from both edges by its whole width stands on nothing. @param {Reach} reach @param {Span} undercut @returns {Remark | null} */
+  function lineLost(reach, undercut) {
+    const line = reach.stage.sample.lineNm;
+    if (line === null || undercut.low === null || line > 2 * undercut.low) return null;
+    return ew.films.remark("line", { line_nm: line, undercut_nm: undercut.low });
+  }
+
+  /** @param {Reach} reach @param {Case} one @param {Evidence} known @param {PlanCaps} plan */
+  function capsOf(reach, one, known, plan) {
+    const remark = ew.films.remark;
+    const caps = [];
+    if (known.adverse.length) caps.push(remark("adverse", { effect: known.adverse[0] }));
+    if (known.conflict && known.single) caps.push(remark("conflict"));
+    if (reach.facts.films[one.film.film].is_family) caps.push(remark("family"));
+    if (one.film.spentNm === null) caps.push(remark("earlier-loss"));
+    const inChamber = inPlasma(reach.method) || reach.method === "vapour";
+    if (inChamber && known.rank === "literature" && plan.targetRank !== "own") caps.push(remark("published-chamber"));
+    if (one.role === "mask") caps.push(...maskCaps(reach, one, plan));
+    return caps;
+  }
+
+  /** @param {Reach} reach @param {Case} one @param {PlanCaps} plan */
+  function maskCaps(reach, one, plan) {
+    const caps = lineCaps(reach, plan.undercut);
+    const recipe = reach.etching.recipe;
+    if (!inPlasma(reach.method)) return [...caps, ...adhesionCaps(reach, one)];
+    return recipe && recipe.cooled ? caps : [...caps, ew.films.remark("heat")];
+  }
+
+  /** @param {Reach} reach @param {Case} one */
+  function adhesionCaps(reach, one) {
+    const remark = ew.films.remark;
+    const recipe = reach.etching.recipe;
+    const stop = reach.timing.schedule.latestStopS;
+    const held = (recipe ? recipe.masks : [])
+      .filter((mask) => mask.film === one.film.film && one.liesOn !== null && mask.on.includes(one.liesOn))
+      .map((mask) => mask.longest_s);
+    const longest = held.length ? Math.max(...held) : 0;
+    if (held.length && stop !== null && longest >= stop) return [];
+    const on = one.liesOn || "";
+    const caps = [
+      held.length
+        ? remark("adhesion-time", { on: on, held_s: longest, stop_s: stop })
+        : remark("adhesion", { on: on }),
+    ];
+    // A mask that was seen to protect so long has shown that it lets nothing through.
+    if (ew.films.isPorous(reach, one.film.film)) caps.push(remark("barrier", { film: one.film.film, under: on }));
+    return caps;
+  }
+
+  /** @param {Reach} reach @param {Span} undercut @returns {Remark[]} */
+  function lineCaps(reach, undercut) {
+    const remark = ew.films.remark;
+    const line = reach.stage.sample.lineNm;
+    if (line === null || reach.method === "lift-off") return [];
+    if (undercut.high === null) return [remark("undercut-unknown")];
+    if (line <= 2 * undercut.high) return [remark("line", { line_nm: line, undercut_nm: undercut.high })];
+    const recipe = reach.etching.recipe;
+    return recipe && recipe.ratio ? [] : [remark("undercut-assumed")];
+  }
+
+  ew.judging = Object.freeze({ judge, distinctRemarks, inPlasma });
+})((globalThis.etchwright = globalThis.etchwright || {}));

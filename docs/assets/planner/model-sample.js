@@ -1,0 +1,115 @@
+// @ts-check
+/*
+ * A sample as a plan sees it: films with thickness in nm, in the stage that is being planned.
+ * Twin of builder/findings/plan/sample.py.
+ */
+(function (ew) {
+  "use strict";
+
+  const DIGITS = 12;
+  const ROOM = "room";
+
+  /** A number to 12 digits: the unit it was written in must leave no trace. @param {number} value */
+  function rounded(value) {
+    return Number(value.toPrecision(DIGITS));
+  }
+
+  /** The number that a checked text states. @param {Facts} facts @param {any} text @param {string} dimension @returns {number | null} */
+  function number(facts, text, dimension) {
+    if (text === undefined || text === null) return null;
+    return rounded(ew.units.parse(facts.units, text, dimension).value);
+  }
+
+  /** @param {Facts} facts @param {any} text @returns {Range | null} */
+  function temperature(facts, text) {
+    if (text === undefined || text === null) return null;
+    if (text === ROOM) return { low: facts.rules.room_temperature_k[0], high: facts.rules.room_temperature_k[1] };
+    const found = ew.units.parse(facts.units, text, "temperature");
+    if (found.form === "value") return { low: found.value, high: found.value };
+    return found.form === "range" ? { low: found.low, high: found.high } : null;
+  }
+
+  /** A film of a sample file that has passed its check. @param {Facts} facts @param {any} film @param {string} role @returns {PlanFilm} */
+  function planFilm(facts, film, role) {
+    const found = ew.units.parse(facts.units, film.thickness, "length");
+    const thickness = rounded(found.value);
+    const half = found.halfWidth;
+    const stated = film.allowed_loss;
+    return {
+      film: film.film, thicknessNm: thickness, role: role,
+      tolerance: half === null ? facts.defaults.tolerance : rounded(rounded(half) / thickness),
+      allowedNm: stated === "any" ? Infinity : number(facts, stated, "length"),
+      on: film.on === undefined ? null : film.on, isCritical: film.surface === "critical",
+      exposed: film.exposed || "face", spentNm: 0, assumed: false,
+    };
+  }
+
+  /** A checked sample file as a plan sees it. @param {Facts} facts @param {any} file @returns {PlanSample} */
+  function planSample(facts, file) {
+    const goal = file.goal || {};
+    const limits = file.limits || {};
+    const mount = file.mount || {};
+    const hottest = temperature(facts, limits.temperature);
+    const isDepth = goal.depth !== undefined && goal.depth !== "through" && goal.depth !== "through-wafer";
+    const back = file.back;
+    return {
+      name: file.sample || "", layers: file.layers.map((/** @type {any} */ one) => planFilm(facts, one, one.role)),
+      exposed: (file.also_exposed || []).map((/** @type {any} */ one) => planFilm(facts, one, "exposed")),
+      back: back && back !== "protected" ? planFilm(facts, back, "back") : null, backProtected: back === "protected",
+      edge: file.edge || null, depthNm: isDepth ? number(facts, goal.depth, "length") : null,
+      throughWafer: goal.depth === "through-wafer", lineNm: number(facts, goal.line, "length"),
+      loadCm2: goal.load_cm2 === undefined ? null : goal.load_cm2, methods: limits.methods || [],
+      tools: limits.tools || [], etchants: limits.etchants || [], hottestK: hottest ? hottest.high : null,
+      carrier: mount.carrier === undefined ? null : mount.carrier, bond: mount.bond === undefined ? null : mount.bond,
+      temperature: temperature(facts, file.temperature),
+    };
+  }
+
+  /** The steps of a checked sample file. @param {Facts} facts @param {any} file @returns {PlanStep[]} */
+  function planSteps(facts, file) {
+    return (file.steps || []).map((/** @type {any} */ step) => ({
+      treat: step.treat || null, etch: step.etch || null, etchant: step.etchant || null,
+      timeS: step.time === undefined ? null : ew.units.parse(facts.units, step.time, "time").value,
+      temperature: temperature(facts, step.temperature),
+    }));
+  }
+
+  /** One stage a target, in the order in which the layers are reached. @param {PlanSample} sample @returns {Stage[]} */
+  function stagesOf(sample) {
+    return sample.layers.flatMap((film, place) =>
+      film.role === "target"
+        ? [{ sample: sample, target: film, above: sample.layers.slice(0, place).reverse(), below: sample.layers.slice(place + 1) }]
+        : [],
+    );
+  }
+
+  /** A film after a step that took at worst `lossNm` (null: nobody knows how much). @param {PlanFilm} film @param {number | null} lossNm */
+  function worn(film, lossNm) {
+    const spent = lossNm === null || film.spentNm === null ? null : film.spentNm + lossNm;
+    return ew.films.changed(film, { spentNm: spent });
+  }
+
+  /** A sample as the best option leaves it: each film with its worst loss. @param {PlanSample} sample @param {Option | null} option @returns {PlanSample} */
+  function wornSample(sample, option) {
+    const after = (/** @type {PlanFilm} */ film) => {
+      if (option === null) return worn(film, null);
+      const losses = option.rows
+        .filter((row) => row.film === film.film && row.role === film.role && row.thicknessNm === film.thicknessNm)
+        .map((row) => row.loss.high);
+      if (!losses.length) return film;
+      if (film.allowedNm === Infinity && losses.includes(null)) return worn(film, Infinity);
+      return worn(film, losses.includes(null) ? null : Math.max(.../** @type {number[]} */ (losses)));
+    };
+    return Object.assign({}, sample, {
+      layers: sample.layers.map(after), exposed: sample.exposed.map(after), back: sample.back ? after(sample.back) : null,
+    });
+  }
+
+  /** A strip leaves no resist. @param {Facts} facts @param {PlanSample} sample @returns {PlanSample} */
+  function stripped(facts, sample) {
+    const layers = sample.layers.filter((film) => film.role !== "mask" || !ew.films.ORGANIC.has(facts.films[film.film].family));
+    return Object.assign({}, sample, { layers: layers });
+  }
+
+  ew.sample = Object.freeze({ planSample, planSteps, stagesOf, wornSample, stripped, rounded });
+})((globalThis.etchwright = globalThis.etchwright || {}));
