@@ -11,10 +11,22 @@ from builder.checking.rule import Checked
 from builder.checking.rules import RULES
 from builder.checking.schema import check_shape
 from builder.checking.schema_files import Schemas
-from builder.problems import Problem, has_errors, sorted_problems
-from builder.reading.lab_tree import RawFile, Shipped, find_shipped, read_lab
+from builder.problems import Problem, Severity, has_errors, sorted_problems
+from builder.reading.lab_tree import Kind, RawFile, Shipped, find_shipped, read_lab
 from builder.records.lab import CheckedFile, LabRecords, build_lab
 from builder.records.terms import Origin
+
+
+_NO_SETTINGS = Problem(
+    "recipes/reference/lab.yaml",
+    0,
+    0,
+    "",
+    Severity.ERROR,
+    "no-reference",
+    "the shipped settings are missing or cannot be used",
+    "install the program again",
+)
 
 
 @dataclass(frozen=True)
@@ -64,6 +76,8 @@ def check_records(
     # A value that was refused stands as null, so its file is unfit although its shape may be right.
     refused = {problem.file for problem in found if has_errors([problem])}
     fit = [item.file for item in shaped if item.file.raw.file not in refused]
+    if not any(_is_shipped_settings(file) for file in fit):
+        return None, sorted_problems([*found, _NO_SETTINGS])
     unfit = [(str(item.file.kind), item.file.id) for item in shaped if item.file.raw.file in refused]
     records = build_lab(_checked_file(file) for file in fit)
     checked = Checked(
@@ -76,6 +90,10 @@ def check_records(
     for rule in RULES:
         found += rule.problems(checked)
     return None if has_errors(found) else records, sorted_problems(found)
+
+
+def _is_shipped_settings(file: RawFile) -> bool:
+    return file.kind is Kind.LAB and file.origin == Origin.REFERENCE
 
 
 def _checked_file(file: RawFile) -> CheckedFile:

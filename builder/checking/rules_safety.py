@@ -12,6 +12,7 @@ from builder.checking.rules_safety_finding import SafetyFinding
 from builder.checking.rules_safety_meetings import (
     WetStep,
     bench_findings,
+    bond_findings,
     film_gas,
     mixture_findings,
     sequence_findings,
@@ -74,6 +75,19 @@ def _sample_steps(records: LabRecords) -> Iterator[Placed]:
             places.append(place)
         for finding in sequence_findings(records, steps):
             yield sample.file, f"/steps/{places[finding.step or 0]}", finding
+
+
+def _sample_films(records: LabRecords) -> Iterator[Placed]:
+    """Yield what the films and the mount of a sample meet in the liquids its steps name."""
+    for sample in records.samples.values():
+        films = [film for film in sample.films if film.film in records.films]
+        thickest = {film.film: film.thickness_nm for film in sorted(films, key=lambda one: one.thickness_nm)}
+        for place, step in sample_steps(records, sample.steps):
+            if step.substance in records.etchants:
+                found = film_gas(records, str(step.substance), thickest, thickest)
+                bond = bond_findings(records, str(step.substance), sample.mount.bond)
+                for finding in (*found, *bond):
+                    yield sample.file, f"/steps/{place}", finding
 
 
 def _films(records: LabRecords) -> Iterator[Placed]:
@@ -165,6 +179,9 @@ RULES: tuple[Rule, ...] = (
     _rule("steps-need-care", _steps, ("unrinsed-steps",), forbidden=False),
     _rule("steps-must-not-meet", _sample_steps, ("unrinsed-steps",)),
     _rule("film-gives-gas", _films, ("film-meets-etchant",)),
+    _rule("film-gives-gas", _sample_films, ("film-meets-etchant",)),
+    _rule("thick-organic", _sample_films, ("thick-organic",)),
+    _rule("bond-in-oxidiser", _sample_films, ("bond-in-oxidiser",)),
     _rule("container-attacked", _containers, ("container-attacked",)),
     _rule("container-attacked", _tool_containers, ("container-attacked",)),
     _rule("container-unproven", _containers, ("container-unknown",), forbidden=False),

@@ -7,7 +7,13 @@ from dataclasses import dataclass, field
 
 from builder.checking.rules_safety_containers import container_findings
 from builder.checking.rules_safety_finding import SafetyFinding, without_repeats
-from builder.checking.rules_safety_meetings import WetStep, bond_findings, film_gas, sequence_findings
+from builder.checking.rules_safety_meetings import (
+    WetStep,
+    bond_findings,
+    film_gas,
+    mixture_findings,
+    sequence_findings,
+)
 from builder.checking.rules_safety_practice import (
     chlorine_on_aluminium,
     hf_first_aid,
@@ -49,6 +55,7 @@ def situation_findings(records: LabRecords, situation: EtchSituation) -> tuple[S
         *chlorine_on_aluminium(records, etchant, films, situation.after),
         *plating_metal_in_hf(records, etchant, films, situation.tool),
         *hf_first_aid(records, etchant),
+        *mixture_findings(records, records.etchants[etchant]),
         *_container(records, situation),
     ]
     return without_repeats(found)

@@ -60,11 +60,11 @@ def zero_failures_upper(n: int, confidence: float) -> float:
 
 def runs_to_see(shift: float, sigma: float, alpha: float, beta: float) -> int:
     """
-    Runs needed to see a shift of the mean to one side at a false-alarm risk `alpha`, missing it at risk `beta`.
+    Runs needed to see a shift of the mean to one side.
 
-    For a shift to either side pass half the risk.
-
-    `shift` and `sigma` > 0 in one unit. The smallest number that is enough with t quantiles.
+    `alpha` is the risk of a false alarm, `beta` that of missing the shift; for a shift to either side
+    pass half of `alpha`. `shift` and `sigma` > 0 in one unit. The smallest number that is enough with
+    t quantiles.
 
     Raises
     ------

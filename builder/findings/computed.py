@@ -23,13 +23,15 @@ class Computed:
     Findings of one build.
 
     `reference` holds the etchants by published facts alone. `own` is by recipe and film, with the
-    targets first. `by_recipe` and `by_etchant` hold only pairs with anything on record.
+    targets first. `gauge` is the relative standard uncertainty that all readings share. `by_recipe` and
+    `by_etchant` hold only pairs with anything on record.
     """
 
     today: datetime.date
     facts: PlanFacts
     reference: PlanFacts
     own: Mapping[str, Mapping[str, OwnRate]]
+    gauge: float = 0.0
 
     @property
     def confidence(self) -> float:
@@ -75,6 +77,7 @@ class Computed:
 def compute(records: LabRecords, today: datetime.date) -> Computed:
     """Return the findings of a lab as of a day."""
     facts = gather(records, today)
+    gauge = records.settings.gauge_error
     published = reference_only(records)
     etchants = {
         id: etchant_facts(published, published.etchants[id]) if _has_own_facts(records, id) else found
@@ -85,6 +88,7 @@ def compute(records: LabRecords, today: datetime.date) -> Computed:
         facts=facts,
         reference=replace(facts, etchants=etchants, etches={}, refused={}),
         own={etch.id: _own(records, etch) for etch in records.etches.values()},
+        gauge=0.0 if gauge is None else gauge.relative.number,
     )
 
 

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 from datetime import date
 
+from builder.findings.computed import compute
 from builder.pages.page import FinishedSite, Page
 from builder.pages.render import render_page
 from builder.records.lab import LabRecords
@@ -42,13 +43,14 @@ def finished_site(records: LabRecords, today: date) -> FinishedSite:
 
 
 def _pages(records: LabRecords, today: date) -> Iterator[Page]:
+    computed = compute(records, today)
     yield render_page("home", home_page(records, today))
     yield render_page("recipe_list", recipe_list(records))
     for view in (film_list, etchant_list, chemical_list, tool_list):
         yield render_page("record_list", view(records))
     yield render_page("bibliography", bibliography_page(records))
     for etch in records.etches.values():
-        yield render_page("recipe", recipe_page(records, etch))
+        yield render_page("recipe", recipe_page(records, computed, etch))
     for film in records.films.values():
         yield render_page("film", film_page(records, film))
     for etchant in records.etchants.values():

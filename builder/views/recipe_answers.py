@@ -28,6 +28,7 @@ from builder.views.number_text import (
     UNKNOWN,
     NumberText,
     Rounding,
+    as_written,
     length_text,
     rate_text,
     number_text,
@@ -83,13 +84,15 @@ class MaskAnswer:
     How much of one mask the usual depth needs, reserve included.
 
     `needed` is for an etch that is stopped on clearing where wafers carried both films, else for the
-    latest stop; `to_latest` is for the latest stop where that is another number.
+    latest stop; `to_latest` is for the latest stop where that is another number. `held` is how long it
+    was seen to stay on.
     """
 
     mask: FilmRef
     needed: str
     basis: str
     to_latest: str
+    held: str
     rank: str
 
 
@@ -234,19 +237,27 @@ def _mask(
     by_timer = _loss_to_latest(known.band, timing)
     found = recipe_selectivity(computed, etch_id, timing.film, mask)
     latest = _needed(records, computed, etch_id, mask, by_timer)
-    ref = film_ref(records, mask)
+    ref, held = film_ref(records, mask), _held(records, etch_id, mask)
     if found is None or not found.pairs or found.lo is None:
         basis = "left in until the latest stop" if by_timer is not None else "its loss is not on record"
-        return MaskAnswer(ref, latest, basis, "", RANK_WORDS[known.rank])
+        return MaskAnswer(ref, latest, basis, "", held, RANK_WORDS[known.rank])
     lost = mask_loss_by_selectivity(timing.cut(timing.usual_nm), found.lo)
     ratio = ratio_text(found.lo, found.mid, found.hi)
+    needed = _needed(records, computed, etch_id, mask, lost)
     return MaskAnswer(
         mask=ref,
-        needed=_needed(records, computed, etch_id, mask, lost),
+        needed=needed,
         basis=f"stopped on clearing; selectivity {ratio.full}, from {_pairs(found.pairs)}",
-        to_latest=latest,
+        to_latest="" if latest == needed else latest,
+        held=held,
         rank=RANK_WORDS[found.rank],
     )
+
+
+def _held(records: LabRecords, etch_id: str, mask: str) -> str:
+    times = [one.longest_time_held for one in records.etches[etch_id].masks if one.film == mask]
+    longest = max(times, key=lambda time: time.number)
+    return as_written(longest.text)
 
 
 def _pairs(count: int) -> str:
@@ -280,11 +291,8 @@ def _sideways(computed: Computed, etch_id: str, timing: TargetTiming) -> Sideway
     if recipe.ratio is not None:
         ratio = Span(recipe.ratio.low, recipe.ratio.mid, recipe.ratio.high)
         shown = number_text(ratio.low, ratio.mid, ratio.high, "")
-        words = (
-            f"{shown.value} × the depth ({shown.interval})"
-            if shown.interval
-            else f"{shown.value} × the depth"
-        )
+        interval = f" ({shown.interval})" if shown.interval else ""
+        words = f"{shown.value} × the depth{interval}"
         return SidewaysAnswer(_way(ratio, timing), words, recipe.ratio.basis)
     if recipe.isotropic:
         ratio = Span(ISOTROPIC_UNDERCUT, None, None)

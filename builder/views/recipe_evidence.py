@@ -2,11 +2,8 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Sequence
-
 from builder.engine import LineFit
 from builder.findings.own_rates import OwnRate, OwnRun
-from builder.records.lab import LabRecords
 from builder.views.drawing.charts import (
     Chart,
     DepthPoint,
@@ -23,7 +20,7 @@ _MICRON = 1000.0
 
 
 def rate_chart(own: OwnRate | None) -> Chart | None:
-    """Return the rates of the runs over time with the next-run band; None without a run that says anything."""
+    """Return the rates of the runs over time with the next-run band; None without a run that says any."""
     if own is None:
         return None
     scale, unit = _rate_unit(own)
@@ -37,7 +34,7 @@ def rate_chart(own: OwnRate | None) -> Chart | None:
     return rates_over_time(points, events, next_run, unit=unit, description=_rates_in_words(own))
 
 
-def depth_charts(records: LabRecords, own: OwnRate | None) -> tuple[Chart, ...]:
+def depth_charts(own: OwnRate | None) -> tuple[Chart, ...]:
     """Return a chart of the newest depth series in use, if there is one."""
     if own is None:
         return ()
@@ -114,8 +111,8 @@ def _depth_chart(run: OwnRun, fit: LineFit) -> Chart:
 def _line_in_words(run: OwnRun, fit: LineFit) -> str:
     slope = rate_text(None, fit.slope_nm_per_s, None).with_unit
     return (
-        f"{len(run.rows)} depths of {run.rows[0].wafer}, {run.date.isoformat()}. Their line rises by {slope} and "
-        f"{induction_words(fit.induction_s)}. {_fit_words(fit)}"
+        f"{len(run.rows)} depths of {run.rows[0].wafer}, {run.date.isoformat()}. Their line rises by {slope} "
+        f"and {induction_words(fit.induction_s)}. {_fit_words(fit)}"
     )
 
 
@@ -133,9 +130,3 @@ def _fit_words(fit: LineFit) -> str:
     shown = plain_number(fit.reduced_chi2, 2)
     verdict = "twice or more of what the uncertainties allow" if fit.reduced_chi2 > 2 else "as expected"
     return f"Reduced chi-squared {shown}: the scatter is {verdict}."
-
-
-def dates_of(runs: Sequence[OwnRun] | Iterable[OwnRun]) -> str:
-    """Return the first and the last day of some runs."""
-    days = sorted(run.date for run in runs)
-    return days[0].isoformat() if days[0] == days[-1] else f"{days[0].isoformat()} – {days[-1].isoformat()}"

@@ -15,7 +15,8 @@ from builder.records.terms import Role
 from builder.views.number_text import NumberText, Rounding, length_text, rate_text, time_text
 from builder.views.plan_words import RANK_WORDS, ROLE_WORDS, reason
 from builder.views.recipe_answers import band_text, depth_text
-from builder.views.references import FilmRef, Link, film_ref, source_link
+from builder.views.link import Link
+from builder.views.references import FilmRef, film_ref, source_link
 
 
 @dataclass(frozen=True)
@@ -96,7 +97,7 @@ def _lead(timing: TargetTiming) -> str:
         return "How long the etch takes is not known, so no loss is."
     return (
         f"What each film loses until the latest stop for {depth_text(timing.usual_nm)} of the target, "
-        f"{time_text(stop, Rounding.UP)}. The word holds for {depth_text(SIDE_FILM_NM)} of the film and the lab's "
-        "default of what it may lose; for your sample the plan decides. A film that is not in this table is "
-        "unmeasured here."
+        f"{time_text(stop, Rounding.UP)}. The word is for {depth_text(SIDE_FILM_NM)} of the film and what it "
+        "may lose by the lab's default; for your sample the plan decides. A film that is not in this table "
+        "is unmeasured here."
     )

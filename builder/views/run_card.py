@@ -1,4 +1,4 @@
-"""What a run card says of a recipe, whatever the sample: settings, steps, handling, first action, versions."""
+"""What a run card says of a recipe on any sample: settings, steps, handling, first action, versions."""
 
 from __future__ import annotations
 

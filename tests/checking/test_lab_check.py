@@ -51,6 +51,15 @@ def test_a_lab_without_settings_works_with_the_shipped_ones(tmp_path: Path, ship
     assert check(tmp_path, shipped, {}) == (True, [])
 
 
+def test_an_incomplete_installation_is_a_problem(tmp_path: Path, shipped: Shipped) -> None:
+    """No default is made up where the shipped settings are gone."""
+    (shipped.reference / "lab.yaml").unlink()
+    has_records, problems = check(tmp_path, shipped, {"lab.yaml": "name: L\n"})
+    assert not has_records
+    assert [problem.rule for problem in problems] == ["no-reference"]
+    assert "install" in problems[0].hint
+
+
 def test_an_error_leaves_no_records(tmp_path: Path, shipped: Shipped) -> None:
     """A plan without the broken fact might call something safe."""
     has_records, problems = check(tmp_path, shipped, {"films/c.yaml": FILM + "similar: [d]\n"})

@@ -78,7 +78,7 @@ back: {film: si-1000, thickness: 0 nm}
         (5, "unit-missing", "/layers/1/thickness"),
         (5, "upside-down", "/layers/1/role"),
         (6, "missing-field", "/layers/2"),
-        (6, "family-for-film", "/layers/2/film"),
+        (6, "unknown-id", "/layers/2/film"),
         (6, "unknown-field", "/layers/2/thicknes"),
         (7, "unknown-id", "/back/film"),
         (7, "not-positive", "/back/thickness"),

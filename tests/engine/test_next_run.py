@@ -214,6 +214,19 @@ def test_two_exact_equal_runs_keep_the_spread_of_the_lab() -> None:
     assert _width(found) > 0.8 * _width(predict_next_run(_runs([0.07, 0.13]), LAB, 0.90))
 
 
+def test_rates_are_the_exponentials_and_unknown_stays_unknown() -> None:
+    """In nm/s: no low end reads as 0, since a rate is never negative; no middle stays None."""
+    both = predict_next_run(_runs([0.0, 0.2]), LAB, 0.90)
+    assert both.mid_nm_per_s == pytest.approx(math.exp(0.1), rel=1e-12)
+    assert both.log_lo is not None
+    assert [both.lo_nm_per_s, both.hi_nm_per_s] == pytest.approx(
+        [math.exp(both.log_lo), math.exp(both.log_hi)]
+    )
+    limit = predict_next_run([RunRate(None, limit_nm_per_s=0.01)], LAB, 0.90)
+    assert limit.lo_nm_per_s == 0
+    assert limit.mid_nm_per_s is None
+
+
 def test_impossible_questions_are_refused() -> None:
     """No run at all, a confidence outside 0 to 1, numbers that are none."""
     for runs, confidence, gauge in (

@@ -27,7 +27,7 @@ _LABEL_DEVIATIONS: dict[str, str] = {}
 
 
 def _digits_fit(number: str) -> bool:
-    """Check digit of CAS: the digits from the right, weighted 1, 2, 3 ..., modulo 10 (CAS, "Check Digit Verification")."""
+    """Digits from the right, weighted 1, 2, 3 ..., modulo 10 (CAS, "Check Digit Verification")."""
     digits = number.replace("-", "")
     return sum(int(d) * w for w, d in enumerate(reversed(digits[:-1]), 1)) % 10 == int(digits[-1])
 
@@ -64,7 +64,7 @@ def test_molar_mass_follows_from_the_formula(chemical: Chemical) -> None:
 
 @pytest.mark.parametrize("chemical", _WITH_BOILING, ids=lambda one: one.id)
 def test_boiling_point_agrees_with_the_collection(chemical: Chemical) -> None:
-    """The boiling point is that of `chemicals` (C. Bell and others; CRC Handbook, Common Chemistry) for this CAS number."""
+    """`chemicals` (C. Bell and others, after CRC Handbook and Common Chemistry) has it by CAS number."""
     assert chemical.boiling_point is not None
     found = [chemicals.Tb(number) for number in chemical.cas]
     assert any(
@@ -87,7 +87,7 @@ def test_pictograms_and_signal_word_follow_from_the_statements(chemical: Chemica
 
 
 def test_precedence_leaves_out_the_exclamation_mark() -> None:
-    """Worked examples of UN GHS 1.4.10.5.3.1: skull over mark, corrosion over irritation, sensitiser over skin."""
+    """By UN GHS 1.4.10.5.3.1: skull over mark, corrosion over irritation, sensitiser over skin."""
     assert derived_pictograms(["H301", "H315", "H336"]) == {"GHS06"}
     assert derived_pictograms(["H314", "H319"]) == {"GHS05"}
     assert derived_pictograms(["H314", "H319", "H302"]) == {"GHS05", "GHS07"}

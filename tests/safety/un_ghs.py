@@ -51,7 +51,7 @@ _TABLE: dict[str, tuple[str, str | None]] = {
     "H410": (_WARNING, "GHS09"),
     "H411": ("none", "GHS09"),
 }
-"""H272 is Danger in category 2 and Warning in category 3: the milder is taken, so that no word is invented."""
+"""H272 is Danger in category 2 and Warning in category 3: the milder is taken, to invent no word."""
 _IRRITATION = {"H315", "H319"}
 _SKIN_SENSITISATION = {"H317"}
 _ORDER = ("none", _WARNING, _DANGER)
