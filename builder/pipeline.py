@@ -8,6 +8,7 @@ from dataclasses import dataclass
 from pathlib import Path
 
 from builder.checking.lab_check import check_lab
+from builder.findings.spread_fit import spread_notices
 from builder.pages.exchange import ExchangeError, exchanged_folder
 from builder.pages.links import check_links
 from builder.pages.page import FinishedSite
@@ -34,6 +35,7 @@ def prepare(lab_dir: Path, as_of: datetime.date | None, progress: Progress) -> P
     if records is None or has_errors(problems):
         return Prepared(None, tuple(problems))
     progress("computing")
+    problems = [*problems, *spread_notices(records)]
     day = as_of or records.settings.as_of or datetime.date.today()
     site = finished_site(records, day)
     return Prepared(site, tuple(problems))

@@ -11,7 +11,16 @@ import click
 
 from builder.checking.lab_check import check_lab
 from builder.cli.options import as_of_option, given_day, lab_option
-from builder.problems import Problem, Severity, format_github, format_json, format_text, has_errors
+from builder.findings.spread_fit import spread_notices
+from builder.problems import (
+    Problem,
+    Severity,
+    format_github,
+    format_json,
+    format_text,
+    has_errors,
+    sorted_problems,
+)
 
 
 @click.command()
@@ -29,6 +38,8 @@ def check(lab: Path, as_of: datetime.date | None, form: str) -> None:
     there is no error (notices do not count), else with 1.
     """
     records, problems = check_lab(lab, given_day(as_of))
+    if records is not None:
+        problems = sorted_problems([*problems, *spread_notices(records)])
     if form == "json":
         click.echo(format_json(problems))
     else:

@@ -12,10 +12,10 @@ from builder.findings.side_films import SIDE_FILM_NM, row_at_latest_stop
 from builder.records.etches import Etch
 from builder.records.lab import LabRecords
 from builder.records.terms import Role
+from builder.views.link import Link
 from builder.views.number_text import NumberText, Rounding, length_text, rate_text, time_text
 from builder.views.plan_words import RANK_WORDS, ROLE_WORDS, reason
 from builder.views.recipe_answers import band_text, depth_text
-from builder.views.link import Link
 from builder.views.references import FilmRef, film_ref, source_link
 
 

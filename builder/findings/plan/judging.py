@@ -74,8 +74,10 @@ def allowed_loss(reach: Reaching, case: Case) -> float | None:
     """Return what a film may still lose, nm: as stated, or by the lab's default; None where neither says."""
     film = case.film
     stated = film.allowed_nm
+    if film.may_vanish:
+        return math.inf
     if film.spent_nm is None:
-        return math.inf if film.may_vanish else None
+        return None
     if stated is None:
         stated = _default_allowance(reach, case)
     if stated is None:

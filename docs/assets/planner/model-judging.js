@@ -57,7 +57,8 @@
   /** What a film may still lose, nm: as stated, or by the lab's default; null where neither says. @param {Reach} reach @param {Case} one */
   function allowedLoss(reach, one) {
     const film = one.film;
-    if (film.spentNm === null) return film.allowedNm === Infinity ? Infinity : null;
+    if (film.allowedNm === Infinity) return Infinity;
+    if (film.spentNm === null) return null;
     const stated = film.allowedNm === null ? defaultAllowance(reach, one, film.thicknessNm) : film.allowedNm;
     return stated === null ? null : Math.max(0, stated - film.spentNm);
   }

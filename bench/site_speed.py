@@ -1,0 +1,70 @@
+"""Records to site, against a plain MkDocs build of the same content written as Markdown outside the nav."""
+
+from __future__ import annotations
+
+import os
+import statistics
+import subprocess
+import sys
+import tempfile
+import time
+from collections.abc import Iterator
+from pathlib import Path
+
+from markdownify import markdownify
+
+from bench.large_lab import write_large_lab
+from builder.checking.lab_check import check_lab
+from builder.pages.page import FinishedSite
+from builder.pipeline import prepare
+
+RECIPES = 300
+REPEATS = 3
+_ENVIRONMENT = {**os.environ, "NO_MKDOCS_2_WARNING": "1"}
+
+
+def rows() -> Iterator[tuple[str, str]]:
+    """Yield what was measured and its value, in words."""
+    with tempfile.TemporaryDirectory() as name:
+        lab, plain = Path(name, "lab"), Path(name, "plain")
+        lab.mkdir()
+        write_large_lab(lab, RECIPES)
+        started = time.perf_counter()
+        check_lab(lab)
+        checked = time.perf_counter() - started
+        site = prepare(lab, None, lambda _: None).site
+        assert site is not None
+        _write_markdown(site, plain)
+        ours, theirs = [], []
+        # Turn about, so that a busy moment of the machine meets both.
+        for _ in range(REPEATS):
+            ours.append(_seconds([sys.executable, "-m", "builder", "site", "--lab", str(lab)]))
+            theirs.append(_seconds([sys.executable, "-m", "mkdocs", "build", "-q", "-f", str(plain / "mkdocs.yml")]))
+        mine, other = statistics.median(ours), statistics.median(theirs)
+        yield f"records to site, {RECIPES} recipes, {len(site.pages)} pages", f"{mine:.1f} s"
+        yield "plain mkdocs build of the same content as Markdown", f"{other:.1f} s"
+        yield "ratio (aim: at most 1.0)", f"{mine / other:.2f}"
+        yield "of ours, reading and checking records", f"{checked:.1f} s"
+
+
+def _write_markdown(site: FinishedSite, folder: Path) -> None:
+    docs = folder / "docs"
+    for page in site.pages:
+        path = docs / f"{page.url.removesuffix('.html')}.md"
+        path.parent.mkdir(parents=True, exist_ok=True)
+        path.write_text(f"# {page.title}\n\n{markdownify(page.html)}", encoding="utf-8")
+    (folder / "mkdocs.yml").write_text(
+        "site_name: plain\nuse_directory_urls: false\ntheme: {name: material, font: false}\n"
+        "plugins: [search]\nnav: [{Home: index.md}]\n",
+        encoding="utf-8",
+    )
+
+
+def _seconds(command: list[str]) -> float:
+    started = time.perf_counter()
+    done = subprocess.run(command, capture_output=True, env=_ENVIRONMENT, check=False)
+    if done.returncode != 0:
+        raise RuntimeError(done.stderr.decode()[-2000:])
+    return time.perf_counter() - started
+
+
