@@ -16,7 +16,6 @@ from builder.reading.lab_tree import Kind, RawFile, Shipped, find_shipped, read_
 from builder.records.lab import CheckedFile, LabRecords, build_lab
 from builder.records.terms import Origin
 
-
 _NO_SETTINGS = Problem(
     "recipes/reference/lab.yaml",
     0,
@@ -93,7 +92,7 @@ def check_records(
 
 
 def _is_shipped_settings(file: RawFile) -> bool:
-    return file.kind is Kind.LAB and file.origin == Origin.REFERENCE
+    return file.kind is Kind.LAB and Origin(str(file.origin)) is Origin.REFERENCE
 
 
 def _checked_file(file: RawFile) -> CheckedFile:

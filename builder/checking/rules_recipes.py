@@ -7,7 +7,7 @@ from collections.abc import Iterator
 from builder.checking.rule import Checked, Fault, Rule
 from builder.problems import Severity, suggestion
 from builder.records.etches import Etch, MaskRecord
-from builder.records.terms import Effect, Method, Status
+from builder.records.terms import Effect, Method, RateKind, Status
 
 
 def recipe_films(etch: Etch) -> Iterator[tuple[str, str]]:
@@ -57,7 +57,10 @@ def _has_evidence(checked: Checked, etch: Etch, film: str) -> bool:
     records = checked.records
     return (
         any(run.film == film for run in records.runs.get(etch.id, ()))
-        or any(rate.film == film for rate in records.rates.get(etch.etchant, ()))
+        or any(
+            rate.film == film and rate.kind is not RateKind.NONE_SEEN
+            for rate in records.rates.get(etch.etchant, ())
+        )
         or any(
             statement.film == film and statement.effect is not Effect.RESISTS
             for statement in records.statements.get(etch.etchant, ())

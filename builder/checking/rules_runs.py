@@ -31,9 +31,13 @@ def _inductions(checked: Checked) -> Iterator[Fault]:
     for run in _runs(checked):
         etch = checked.records.etches.get(run.etch)
         induction = None if etch is None else etch.induction
-        if induction is not None and 0 < run.time_s <= induction.number:
+        pointer = f"{run.pointer}/time_s"
+        if run.time_s == 0:
+            words = "a run of 0 s gives no rate"
+            yield Fault(run.file, pointer, words, "the thickness before is in before_nm already")
+        elif induction is not None and run.time_s <= induction.number:
             words = f"{run.time_s:g} s is not longer than the induction time of the recipe, {induction.text}"
-            yield Fault(run.file, f"{run.pointer}/time_s", words)
+            yield Fault(run.file, pointer, words)
 
 
 def _temperatures(checked: Checked) -> Iterator[Fault]:

@@ -27,13 +27,6 @@ def sample_steps(records: LabRecords, steps: Iterable[SequenceStep]) -> Iterator
             yield place, _treatment(records, step)
 
 
-def steps_before(records: LabRecords, steps: Iterable[SequenceStep]) -> tuple[WetStep, ...]:
-    """Return the wet steps up to the first open etch of a sequence."""
-    listed = list(steps)
-    opens = next((place for place, step in enumerate(listed) if step.etch == ANY_ETCH), len(listed))
-    return tuple(step for place, step in sample_steps(records, listed[:opens]))
-
-
 def _recipe_steps(records: LabRecords, etch_id: str) -> Iterator[WetStep]:
     etch = records.etches.get(etch_id)
     if etch is not None and etch.etchant in records.etchants:

@@ -13,8 +13,8 @@ from builder.findings.plan.facts import PlanFacts
 from builder.findings.plan.result import Excluded, FilmRow, NoteCode, Option, Plan, StagePlan
 from builder.records.terms import Role
 from builder.views.number_text import Rounding, length_text, percent_text, rate_text, time_text
+from builder.views.plan_cap_words import LIFTS
 from builder.views.plan_words import (
-    LIFTS,
     RANK_WORDS,
     blocker,
     excluded_words,

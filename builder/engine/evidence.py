@@ -88,7 +88,7 @@ def envelope(values: Sequence[PublishedValue], quantile: float) -> LimitedBand |
     known_highs = [high for high in highs if high is not None]
     high = max(known_highs) if len(known_highs) == len(highs) else None
     band = RateBand(low=min(lows), mid=_geometric_middle(distinct), high=high)
-    return LimitedBand(band, _limit_time(distinct, high))
+    return LimitedBand(band, _limit_time(distinct))
 
 
 def widest(bands: Sequence[RateBand]) -> RateBand:
@@ -126,11 +126,21 @@ def _geometric_middle(values: Sequence[PublishedValue]) -> float | None:
     return math.exp(sum(logs) / len(logs)) if logs else None
 
 
-def _limit_time(values: Sequence[PublishedValue], high: float | None) -> float | None:
-    """A high end that is a printed limit holds only as long as somebody watched."""
+def _limit_time(values: Sequence[PublishedValue]) -> float | None:
+    """
+    A high end that is a printed limit holds only as long as somebody watched.
+
+    Compared with values as printed, not as widened: asking for more confidence must not lift the limit.
+    """
+    limits = [value for value in values if value.kind is PublishedKind.UPPER and value.high is not None]
+    top = max((value.high for value in limits if value.high is not None), default=0.0)
+    measured = max(
+        (value.high for value in values if value.kind is PublishedKind.VALUE and value.high is not None),
+        default=0.0,
+    )
     times = [
         UNTESTED_LIMIT_S if value.tested_time_s is None else value.tested_time_s
-        for value in values
-        if value.kind is PublishedKind.UPPER and value.high == high
+        for value in limits
+        if value.high == top
     ]
-    return min(times) if times else None
+    return min(times) if times and top >= measured else None

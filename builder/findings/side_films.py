@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from builder.engine import Cut, Rank, Schedule, Span, open_by_look, open_by_timer
+from builder.engine import UNKNOWN_SCHEDULE, Cut, Rank, Schedule, Span, open_by_look, open_by_timer
 from builder.findings.computed import Computed
 from builder.findings.plan.evidence import Etching
 from builder.findings.plan.exposures import Case, Reaching, Timing
@@ -29,14 +29,16 @@ def row_at_latest_stop(
     return _row(computed, computed.facts, etching, times, timing.film, film, role, timing.known.rank)
 
 
-def row_after(computed: Computed, etching: Etching, film: str, time_s: float) -> FilmRow:
-    """Return what a film loses in a time that is set, from the start."""
+def row_after(computed: Computed, etching: Etching, film: str, time_s: float | None) -> FilmRow:
+    """Return what a film loses in a time that is set, from the start; None: nobody knows how long."""
     facts = computed.facts if etching.recipe is not None else computed.reference
     cut = Cut(
         depth_nm=SIDE_FILM_NM, thickness_nm=SIDE_FILM_NM, tolerance=0.0, nonuniformity=phi_of(facts, etching),
         offset_s=0.0, overetch=0.0, reaction_s=reaction_of(facts, etching), through=True,
     )  # fmt: skip
-    fixed = Schedule(time_s, time_s, time_s, None, time_s, None, None, None)
+    fixed = UNKNOWN_SCHEDULE
+    if time_s is not None:
+        fixed = Schedule(time_s, time_s, time_s, None, time_s, None, None, None)
     # The time is set, not computed: no target's rate makes it less sure. So a published number of a
     # chamber that has no own run is still capped, by the film's own rank.
     rank = Rank.OWN if etching.recipe is not None else Rank.LITERATURE

@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 from datetime import date
 
-from builder.findings.computed import compute
+from builder.findings.computed import Computed, compute
 from builder.pages.page import FinishedSite, Page
 from builder.pages.render import render_page
 from builder.records.lab import LabRecords
@@ -14,6 +14,9 @@ from builder.views.chemical_page import chemical_page
 from builder.views.etchant_page import etchant_page
 from builder.views.film_page import film_page
 from builder.views.home_page import home_page
+from builder.views.link import Link
+from builder.views.matrix_films import films_matrix
+from builder.views.matrix_selectivity import selectivity_index, selectivity_pages
 from builder.views.recipe_page import recipe_page
 from builder.views.record_lists import chemical_list, etchant_list, film_list, recipe_list, tool_list
 from builder.views.safety_container_matrix import container_matrix
@@ -60,7 +63,17 @@ def _pages(records: LabRecords, today: date) -> Iterator[Page]:
         yield render_page("chemical", view_of_chemical, view_of_chemical.found_as)
     for tool in records.tools.values():
         yield render_page("tool", tool_page(records, tool))
+    yield from _matrices(records, computed)
     yield from _safety_pages(records)
+
+
+def _matrices(records: LabRecords, computed: Computed) -> Iterator[Page]:
+    selectivities = selectivity_pages(records, computed)
+    index = selectivity_index(records, selectivities)
+    yield render_page("matrix", films_matrix(records, computed, (Link(index.title, index.url),)))
+    yield render_page("selectivity_index", index)
+    for view in selectivities:
+        yield render_page("matrix", view)
 
 
 def _safety_pages(records: LabRecords) -> Iterator[Page]:

@@ -26,7 +26,7 @@ def reacting_groups(film: Film) -> Iterator[str]:
     """Yield the groups of films that the formula puts it into."""
     found = elements(film)
     if film.family is FilmFamily.METAL and found and found[0] in _HYDROGEN_METALS:
-        yield "aluminium"
+        yield from ("aluminium", "hydrogen-metal")
     if film.family in _COMPOUND_FAMILIES:
         if "As" in found:
             yield "arsenide"

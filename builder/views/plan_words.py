@@ -3,14 +3,13 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Callable, Mapping, Sequence
+from collections.abc import Sequence
 
 from builder.engine import Ground, Rank, Verdict
 from builder.findings.plan.result import (
     CapCode,
     ExcludedCode,
     FilmRow,
-    LostCode,
     NoteCode,
     Option,
     Remark,
@@ -18,10 +17,17 @@ from builder.findings.plan.result import (
     Value,
 )
 from builder.records.terms import Method, Role
-from builder.views.number_text import length_text, plain_number, temperature_text, time_text
-
-Params = Mapping[str, Value]
-_Sentence = Callable[[Params], str]
+from builder.views.number_text import length_text
+from builder.views.plan_cap_words import (
+    Sentence,
+    between,
+    cap_words,
+    clause,
+    lost_words,
+    plain_length,
+    temperature_of,
+    time_of,
+)
 
 RANK_WORDS: dict[Rank, str] = {
     Rank.OWN: "own runs",
@@ -54,87 +60,17 @@ _GROUNDS: dict[Ground, str] = {
     Ground.TIME_UNKNOWN: "nobody knows how long the etch takes, so its loss is unknown",
 }
 
-_CAPS: dict[str, _Sentence] = {
-    CapCode.ADVERSE: lambda p: f"on record: it {p['effect']}",
-    CapCode.ADHESION: lambda p: f"no record that this mask stays on {p['on']} in this recipe",
-    CapCode.ADHESION_TIME: lambda p: (
-        f"the mask was seen to stay on {p['on']} for {_time(p, 'held_s')} only"
-        + ("" if p["stop_s"] is None else f", and the etch may take {_time(p, 'stop_s')}")
-    ),
-    CapCode.BACK: lambda p: "what covers the back is not stated, and the back is wet from the start",
-    CapCode.BARRIER: lambda p: (
-        f"{p['film']} is not known to be dense; what etches may pass it to {p['under']}"
-    ),
-    CapCode.CARRIER_LOAD: lambda p: f"the carrier is bare {p['film']} too, and no run had such a load",
-    CapCode.CONFLICT: lambda p: "one own run contradicts the literature",
-    CapCode.COUPLE: lambda p: f"{p['one']} and {p['other']} are wet together; no record of that couple",
-    CapCode.COUPLE_UNDERCUT: lambda p: f"{p['one']} with {p['other']}: {_clause(p['words'])}",
-    CapCode.EARLIER_LOSS: lambda p: "nobody knows what an earlier step has taken",
-    CapCode.EDGE: lambda p: "whether the sample's edge is open is not stated",
-    CapCode.FAMILY: lambda p: "the film is not known exactly; the worst of those it may be counts",
-    CapCode.HEAT: lambda p: "no record of cooling; the mask may get hot",
-    CapCode.LINE: lambda p: (
-        f"a line of {_length(p, 'line_nm')} may lose {_length(p, 'undercut_nm')} from each edge"
-    ),
-    CapCode.LOAD: lambda p: (
-        f"a load of {_area(p, 'load_cm2')} is far from that of the runs, "
-        f"{_area(p, 'low_cm2')} to {_area(p, 'high_cm2')}"
-    ),
-    CapCode.PUBLISHED_CHAMBER: lambda p: "the number is from another chamber, and this one has no own run",
-    CapCode.THROUGH_WAFER: lambda p: "etching through the wafer needs a carrier or a film to stop on",
-    CapCode.UNDER_NOBLE: lambda p: f"{p['layer']} is usual under {p['film']}; what lies there is not stated",
-    CapCode.UNDERCUT_ASSUMED: lambda p: (
-        "the undercut is a rule of thumb here; this recipe has none on record"
-    ),
-    CapCode.UNDERCUT_UNKNOWN: lambda p: (
-        "how far the edge moves is not on record, and a line width is asked for"
-    ),
-}
-
-LIFTS: dict[str, str] = {
-    CapCode.ADVERSE: "look at a test piece under the microscope and record what you see",
-    CapCode.ADHESION: "record a mask that stayed on this film, with its preparation and time",
-    CapCode.ADHESION_TIME: "run a test piece for longer and record the time the mask held",
-    CapCode.BACK: "state the film on the back, or that it is protected",
-    CapCode.BARRIER: "record that the film is dense, or that the mask held",
-    CapCode.CARRIER_LOAD: "state load_cm2 with the carrier in it, or use a carrier of another film",
-    CapCode.CONFLICT: "run a second monitor wafer",
-    CapCode.COUPLE: "etch a piece with both films and record the couple",
-    CapCode.COUPLE_UNDERCUT: "avoid the contact, or measure the undercut on a test piece",
-    CapCode.EARLIER_LOSS: "measure the film after the earlier step",
-    CapCode.EDGE: "state edge: open, protected or unused",
-    CapCode.FAMILY: "name the film as deposited",
-    CapCode.HEAT: "record the recipe's cooling",
-    CapCode.LINE: "make the line wider, or pick an etch with less undercut",
-    CapCode.LOAD: "run a monitor wafer with this load",
-    CapCode.PUBLISHED_CHAMBER: "run one monitor wafer of the target in this chamber",
-    CapCode.THROUGH_WAFER: "state mount.carrier, or the film to stop on",
-    CapCode.UNDER_NOBLE: "state on: the film under it, or on: none",
-    CapCode.UNDERCUT_ASSUMED: "measure the undercut and record the recipe's undercut_ratio",
-    CapCode.UNDERCUT_UNKNOWN: "measure the undercut and record the recipe's undercut_ratio",
-}
-
-_LOST: dict[str, _Sentence] = {
-    LostCode.COUPLE: lambda p: f"{p['one']} touching {p['other']}: {_clause(p['words'])}",
-    LostCode.LINE: lambda p: (
-        f"a line of {_length(p, 'line_nm')} loses at least {_length(p, 'undercut_nm')} from each edge "
-        "and stands on nothing"
-    ),
-    LostCode.MASK_FAILS: lambda p: f"on record: this mask {p['effect']} here",
-    LostCode.ROUGHENED: lambda p: "it roughens, and its surface is critical",
-}
-
-_NOTES: dict[str, _Sentence] = {
+_NOTES: dict[str, Sentence] = {
     NoteCode.NOT_A_TARGET: lambda p: f"The recipe is not meant for {p['film']}; its rate is on record.",
     NoteCode.DRAFT: lambda p: "The recipe is a draft: nobody has called it proven.",
     NoteCode.CONFLICT: lambda p: "Own runs and the literature contradict each other; the own runs count.",
     NoteCode.FAR: lambda p: "Own runs were at another temperature and do not count here.",
     NoteCode.ALL_TEMPERATURES: lambda p: "No temperature is asked for: the rates span all on record.",
     NoteCode.TIME_OUTSIDE_RUNS: lambda p: (
-        f"The runs lasted {_time(p, 'low_s')} to {_time(p, 'high_s')}; up to {_time(p, 'stop_s')} nobody has "
-        "shown that the rate stays the same."
+        f"The runs lasted {between(time_of(p, 'low_s'), time_of(p, 'high_s'))}; "
+        f"up to {time_of(p, 'stop_s')} nobody has shown that the rate stays the same."
     ),
-    NoteCode.COUPLE_TARGET: lambda p: f"{p['one']} with {p['other']}: {_clause(p['words'])}.",
+    NoteCode.COUPLE_TARGET: lambda p: f"{p['one']} with {p['other']}: {clause(p['words'])}.",
     NoteCode.UNDERCUT_ASSUMED: lambda p: (
         "An isotropic etch goes sideways at least as far as down (common practice, no source)."
     ),
@@ -143,7 +79,7 @@ _NOTES: dict[str, _Sentence] = {
     NoteCode.HAZARD: lambda p: str(p["words"]),
 }
 
-_UNSTATED: dict[str, _Sentence] = {
+_UNSTATED: dict[str, Sentence] = {
     UnstatedCode.BACK: lambda p: "the film on the back, or that it is protected",
     UnstatedCode.EDGE: lambda p: "whether the edge is open, protected or unused",
     UnstatedCode.UNDER_NOBLE: lambda p: f"what lies under {p['film']} (on: a film, or none)",
@@ -159,8 +95,8 @@ _HINTS = {
     "conditions": "a rate or a statement is on record under other conditions",
 }
 
-_EXCLUDED: dict[str, _Sentence] = {
-    ExcludedCode.NO_EVIDENCE: lambda p: f"nothing on record for {p['film']} here" + _hint_clause(p["hint"]),
+_EXCLUDED: dict[str, Sentence] = {
+    ExcludedCode.NO_EVIDENCE: lambda p: f"nothing on record for {p['film']} here" + _hintclause(p["hint"]),
     ExcludedCode.DOES_NOT_ETCH: lambda p: f"no etching of {p['film']} was seen",
     ExcludedCode.RETIRED: lambda p: "retired",
     ExcludedCode.TOOL_REFUSES: lambda p: str(p["words"]),
@@ -168,10 +104,10 @@ _EXCLUDED: dict[str, _Sentence] = {
     ExcludedCode.TOOL: lambda p: f"{p['tool']} is outside the sample's limits",
     ExcludedCode.ETCHANT: lambda p: f"{p['etchant']} is outside the sample's limits",
     ExcludedCode.TOO_HOT: lambda p: (
-        f"runs at {_temperature(p, 'recipe_k')}, and the sample may see {_temperature(p, 'limit_k')}"
+        f"runs at {temperature_of(p, 'recipe_k')}, and the sample may see {temperature_of(p, 'limit_k')}"
     ),
     ExcludedCode.OTHER_TEMPERATURE: lambda p: (
-        f"runs at {_temperature(p, 'recipe_k')}, not at {_temperature(p, 'asked_k')}"
+        f"runs at {temperature_of(p, 'recipe_k')}, not at {temperature_of(p, 'asked_k')}"
     ),
     ExcludedCode.SAFETY: lambda p: f"not allowed: {p['words']}",
     ExcludedCode.MEETING: lambda p: f"{p['first']} must not be carried into {p['second']}: {p['words']}",
@@ -181,7 +117,7 @@ _EXCLUDED: dict[str, _Sentence] = {
 def reason(row: FilmRow) -> str:
     """Return why a film has its word: what overrides, the loss against what is allowed, then each cap."""
     if row.lost is not None:
-        return _LOST[row.lost.code](row.lost.params)
+        return lost_words(row.lost)
     if any(cap.code == CapCode.BACK for cap in row.caps):
         return cap_words(next(cap for cap in row.caps if cap.code == CapCode.BACK))
     # What keeps a film from "holds" says nothing where the word is worse anyhow.
@@ -203,23 +139,20 @@ def listed(names: Sequence[str]) -> str:
 
 
 def _ground(row: FilmRow) -> str:
+    if row.ground is Ground.NO_ALLOWANCE and row.spent_nm is None:
+        return "how much of it may still go is not known"
     if row.ground in _GROUNDS:
         return _GROUNDS[row.ground]
     assert row.loss.low is not None
     if row.allowed_nm is None or math.isinf(row.allowed_nm):
         allowed = ""
     else:
-        allowed = f" of {_plain_length(row.allowed_nm)} allowed"
+        allowed = f" of {plain_length(row.allowed_nm)} allowed"
     if row.ground is Ground.MILD_END_EXCEEDS:
         whole = " (all of it)" if row.loss.low >= row.thickness_nm else ""
         return f"even the mild end takes {length_text(row.loss.low, None, None).with_unit}{whole}{allowed}"
     high = "an unknown amount" if row.loss.high is None else length_text(None, None, row.loss.high).with_unit
     return f"at worst {high.removeprefix('at most ')}{allowed}"
-
-
-def cap_words(cap: Remark) -> str:
-    """Return what a cap says."""
-    return _CAPS[cap.code](cap.params)
 
 
 def note_words(note: Remark) -> str:
@@ -287,36 +220,5 @@ def _capital(text: str) -> str:
     return text[:1].upper() + text[1:]
 
 
-def _hint_clause(hint: Value) -> str:
+def _hintclause(hint: Value) -> str:
     return f" ({hint_words(str(hint))})" if hint is not None else ""
-
-
-def _clause(words: Value) -> str:
-    text = str(words).rstrip(".")
-    return text[:1].lower() + text[1:]
-
-
-def _time(params: Params, key: str) -> str:
-    return time_text(_number(params, key))
-
-
-def _length(params: Params, key: str) -> str:
-    return _plain_length(_number(params, key))
-
-
-def _plain_length(value_nm: float) -> str:
-    return length_text(None, value_nm, None).with_unit
-
-
-def _area(params: Params, key: str) -> str:
-    return f"{plain_number(_number(params, key))}\N{NO-BREAK SPACE}cm²"
-
-
-def _temperature(params: Params, key: str) -> str:
-    return temperature_text(_number(params, key))
-
-
-def _number(params: Params, key: str) -> float:
-    value = params[key]
-    assert isinstance(value, (int, float))
-    return float(value)

@@ -81,7 +81,7 @@ class TimeAnswer:
 @dataclass(frozen=True)
 class MaskAnswer:
     """
-    How much of one mask the usual depth needs, reserve included.
+    How much of one mask the usual depth needs at least, reserve included; "unknown" where nobody measured.
 
     `needed` is for an etch that is stopped on clearing where wafers carried both films, else for the
     latest stop; `to_latest` is for the latest stop where that is another number. `held` is how long it
@@ -275,7 +275,7 @@ def _needed(records: LabRecords, computed: Computed, etch_id: str, mask: str, lo
     in_plasma = records.etches[etch_id].method in (Method.PLASMA, Method.CYCLIC)
     organic = records.films[mask].family in _ORGANIC
     needed = least_mask(lost, computed.facts.defaults.allowance, resist_in_plasma=organic and in_plasma)
-    return length_text(None, None, needed).with_unit.replace("at most", "at least")
+    return length_text(None, None, needed).with_unit.removeprefix("at most ")
 
 
 def _no_mask(records: LabRecords, etch_id: str) -> str:

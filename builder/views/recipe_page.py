@@ -11,7 +11,6 @@ from builder.records.etches import Etch
 from builder.records.lab import LabRecords
 from builder.records.runs import Run
 from builder.views.drawing.charts import Chart
-from builder.views.drawing.section import Section
 from builder.views.link import Link, PageKind, page_url
 from builder.views.number_text import as_recorded
 from builder.views.recipe_answers import RecipeAnswers, recipe_answers
@@ -20,11 +19,11 @@ from builder.views.recipe_films import SideFilms, side_films
 from builder.views.recipe_numbers import Numbers, recipe_numbers
 from builder.views.recipe_record import RecipeRecord, recipe_record
 from builder.views.recipe_rows import RecipeRow, recipe_rows
-from builder.views.recipe_section import recipe_section
+from builder.views.recipe_section import RecipeSection, recipe_section
 from builder.views.recipe_standing import Standing, standing
 from builder.views.recipe_worked import Worked, worked_numbers
 from builder.views.references import FilmRef, film_ref, source_link
-from builder.views.safety_strip import SafetyStrip, etchant_strip
+from builder.views.safety_strip import SafetyStrip, recipe_strip
 
 
 @dataclass(frozen=True)
@@ -53,7 +52,7 @@ class RecipePage:
     search_text: str
     row: RecipeRow
     standing: Standing
-    section: Section | None
+    section: RecipeSection | None
     answers: RecipeAnswers
     safety: SafetyStrip
     record: RecipeRecord
@@ -81,7 +80,7 @@ def recipe_page(records: LabRecords, computed: Computed, etch: Etch) -> RecipePa
         standing=standing(records, computed, etch, timing),
         section=recipe_section(records, computed, etch.id, timing),
         answers=recipe_answers(records, computed, etch.id),
-        safety=etchant_strip(records, records.etchants[etch.etchant]),
+        safety=recipe_strip(records, etch),
         record=recipe_record(records, etch),
         rate_chart=rate_chart(own),
         depth_charts=depth_charts(own),

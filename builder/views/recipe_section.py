@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import statistics
+from dataclasses import dataclass, replace
 
 from builder.engine import RateBand, loss, open_by_timer
 from builder.findings.computed import Computed
@@ -16,13 +17,32 @@ from builder.views.number_text import length_text
 from builder.views.recipe_answers import depth_text
 from builder.views.words import listed
 
+_SHORT = {Role.MASK: "mask", Role.TARGET: "target", Role.UNDER: "under it"}
 _DEEP = 2.0
 """A film at least so many times thicker than the usual depth is etched into, not through."""
 
 
+@dataclass(frozen=True)
+class KeyLine:
+    """What one layer of the drawing is: its role there, its film, how thick it is drawn for."""
+
+    name: str
+    family: str
+    film: str
+    thickness: str
+
+
+@dataclass(frozen=True)
+class RecipeSection:
+    """The drawing, and the full names that have no room in it."""
+
+    drawing: Section
+    key: tuple[KeyLine, ...]
+
+
 def recipe_section(
     records: LabRecords, computed: Computed, etch_id: str, timing: TargetTiming
-) -> Section | None:
+) -> RecipeSection | None:
     """Return the drawing of a recipe's first target before and after; None where lift-off etches nothing."""
     if records.etches[etch_id].method is Method.LIFT_OFF:
         return None
@@ -32,7 +52,12 @@ def recipe_section(
     under = None if into else _under_layer(records, computed, etch_id)
     layers = [layer for layer in (mask, target, under) if layer is not None]
     ratio = computed.facts.etches[etch_id].ratio
-    return section(layers, None if ratio is None else ratio.mid, _description(layers, timing, into=into))
+    short = [replace(layer, name=_SHORT[layer.role]) for layer in layers]
+    words = _description(layers, timing, into=into)
+    return RecipeSection(
+        section(short, None if ratio is None else ratio.mid, words),
+        tuple(KeyLine(_SHORT[one.role], one.family, one.name, one.thickness) for one in layers),
+    )
 
 
 def _is_etched_into(records: LabRecords, computed: Computed, etch_id: str, timing: TargetTiming) -> bool:

@@ -3,11 +3,13 @@
 from __future__ import annotations
 
 from collections.abc import Iterable
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
-from builder.findings.safety import etchant_hazards
+from builder.checking.rules_safety_plan import recipe_films
+from builder.findings.safety import etchant_hazards, plan_safety
 from builder.records.chemicals import Chemical
 from builder.records.etchants import Etchant
+from builder.records.etches import Etch
 from builder.records.lab import LabRecords
 from builder.records.mixing_match import HF_PRECAUTION
 from builder.records.safety import Precaution
@@ -133,6 +135,14 @@ def etchant_strip(records: LabRecords, etchant: Etchant) -> SafetyStrip:
         contacts=contacts(records),
         links=links,
     )
+
+
+def recipe_strip(records: LabRecords, etch: Etch) -> SafetyStrip:
+    """Return the strip of a recipe: that of its etchant, what its films and steps add, its own waste."""
+    strip = etchant_strip(records, records.etchants[etch.etchant])
+    found = plan_safety(records, etch.etchant, etch.method, recipe_films(etch), etch_id=etch.id)
+    own = tuple(finding.message for finding in found.findings)
+    return replace(strip, sentences=(*strip.sentences, *own), waste=etch.waste or strip.waste)
 
 
 def contacts(records: LabRecords) -> tuple[Fact, ...]:

@@ -114,8 +114,8 @@ def _one_run(pencil: Pencil, runs: Sequence[OwnRun]) -> Iterator[WorkedStep]:
     yield shown("Its rate.", rate, "nm/min")
     log = pencil.work_log(f"ln({rate.text})")
     yield WorkedStep(
-        "The logarithm of its rate in nm/min: rates spread by percent, and logarithms turn percent into plain "
-        "differences. Those of all runs in use:", log.sum, log.text, "", lists_runs=True,
+        "The logarithm of its rate in nm/min: rates spread by percent, and logarithms turn percent into "
+        "plain differences. Those of all runs in use:", log.sum, log.text, "", lists_runs=True,
     )  # fmt: skip
 
 

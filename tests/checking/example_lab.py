@@ -23,14 +23,18 @@ _STANDS_AT = re.compile(r"# stands at: (recipes/\S+)")
 
 @dataclass(frozen=True)
 class Example:
-    """One example: a file, or a folder of files that stand together; the name is that of the rule."""
+    """
+    One example: a file, or a folder of files that stand together.
+
+    The name is that of the rule; a second example of a rule is called `RULE--VARIANT`.
+    """
 
     path: Path
 
     @property
     def rule(self) -> str:
         """The rule it shows, broken or kept."""
-        return self.path.stem
+        return self.path.stem.partition("--")[0]
 
     @property
     def kind(self) -> str:
@@ -54,7 +58,7 @@ def examples(folder: str) -> list[Example]:
 def _place(path: Path) -> str:
     head = path.read_bytes()[:300].decode("utf-8", "replace")
     match = _STANDS_AT.search(head)
-    return match[1] if match else f"recipes/{path.parent.name}/{path.name}"
+    return match[1] if match else f"recipes/{path.parent.name}/{path.name.replace('--', '-')}"
 
 
 @functools.cache

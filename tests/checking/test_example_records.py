@@ -10,7 +10,7 @@ from tests.checking.rule_names import FOLDER_RULES, rule_names
 
 
 def _name(example: Example) -> str:
-    return f"{example.kind}/{example.rule}"
+    return f"{example.kind}/{example.path.name}"
 
 
 def test_the_example_lab_itself_has_no_problem() -> None:

@@ -1,15 +1,21 @@
-"""Fourteen dangerous recipes, sequences and mixtures: the check of records and the plan both catch each."""
+"""Thirteen dangerous recipes, sequences and mixtures: the check of records and the plan both catch each."""
 
 from __future__ import annotations
 
-from collections.abc import Callable
+import datetime
+import functools
 from dataclasses import dataclass, replace
 from pathlib import Path
 
 import pytest
 
-from builder.checking.rules_safety_meetings import WetStep, mixture_findings
-from builder.findings.safety import PlanSafety, plan_safety, sample_safety, sequence_findings
+from builder.checking.rules_safety_meetings import WetStep
+from builder.findings.plan.facts import PlanFacts
+from builder.findings.plan.gather import gather
+from builder.findings.plan.planning import plan
+from builder.findings.plan.result import ExcludedCode, NoteCode, StagePlan
+from builder.findings.plan.sample import plan_sample
+from builder.findings.safety import plan_safety, sequence_findings
 from builder.records.etches import AfterStep
 from builder.records.lab import LabRecords
 from builder.records.record import Part
@@ -19,6 +25,7 @@ from tests.checking.example_lab import Example, problems_with
 from tests.safety.shipped import shipped_records
 
 RECORDS = shipped_records()
+DAY = datetime.date(2026, 11, 15)
 _HEAD = "# Invented for the tests; not measured anywhere.\n"
 _ETCH = """name: Dangerous etch
 method: {method}
@@ -53,74 +60,83 @@ def _etch(etchant: str, target: str, more: str, tool: str = "example-bench", **o
     return _HEAD + _ETCH.format(etchant=etchant, target=target, tool=tool, more=bath + more, **given)
 
 
-def _sample(**more: object) -> Sample:
-    layers = [
-        {
-            "film": more.pop("mask", "resist-positive-a"),
-            "thickness": more.pop("thick", "1.4 um"),
-            "role": "mask",
-        },
-        {"film": more.pop("target", "sio2-thermal-wet"), "thickness": "500 nm", "role": "target"},
-        {"film": more.pop("under", "si-100"), "thickness": "525 um", "role": "under"},
+Layers = list[dict[str, str]]
+_BED = {"film": "si-100", "thickness": "525 um", "role": "under"}
+
+
+def _layers(mask: str, target: str, bed: dict[str, str] = _BED, thick: str = "1.4 um") -> Layers:
+    return [
+        {"film": mask, "thickness": thick, "role": "mask"},
+        {"film": target, "thickness": "500 nm", "role": "target"},
+        bed,
     ]
-    return Sample.from_raw({"layers": layers, **more}, "sample.yaml", Origin.LAB)
 
 
-def _plan(etchant: str, **sample: object) -> PlanSafety:
-    return sample_safety(RECORDS, etchant, RECORDS.etchants[etchant].method, _sample(**sample))
+def _resist(thick: str) -> Layers:
+    return [{"film": "resist-positive-a", "thickness": thick, "role": "target"}, _BED]
 
 
-def _with_etch(etch_id: str, **changes: object) -> LabRecords:
-    return replace(RECORDS, etches={**RECORDS.etches, etch_id: replace(RECORDS.etches[etch_id], **changes)})
-
-
-def _glass_bench() -> PlanSafety:
-    tool = replace(RECORDS.tools["hf-bench"], container="glass")
-    records = replace(RECORDS, tools={**RECORDS.tools, "hf-bench": tool})
-    return plan_safety(records, "bhf-5-1", Method.WET, ["sio2-thermal-wet"], tool_id="hf-bench")
-
-
-def _warm_polypropylene() -> PlanSafety:
-    tool = replace(RECORDS.tools["hf-bench"], container="pp")
-    records = replace(RECORDS, tools={**RECORDS.tools, "hf-bench": tool})
-    hot = RECORDS.etches["silicon-koh"].temperature
-    return plan_safety(
-        records, "hf-10-1", Method.WET, ["sio2-thermal-wet"], tool_id="hf-bench", temperature=hot
+def _dangerous_lab() -> LabRecords:
+    """The demonstration lab, spoiled: glass under HF, a hot plastic tank, steps left out, wrong first aid."""
+    rinse = AfterStep(what="Rinse", kind=AfterStepKind.RINSE)
+    solvent = AfterStep(what="Dry from isopropanol", kind=AfterStepKind.DRY, chemical="ipa")
+    koh = RECORDS.etches["silicon-koh"]
+    own = replace(
+        RECORDS.etchants["cu-hno3"],
+        id="own",
+        origin=Origin.LAB,
+        parts=(Part(chemical="hno3-70", amount="1 part"), Part(chemical="ipa", amount="1 part")),
     )
-
-
-def _ordinary_first_aid() -> PlanSafety:
-    acid = replace(RECORDS.chemicals["hf-49"], precaution="mineral-acids")
-    bath = replace(RECORDS.etchants["hf-10-1"], precaution=None)
-    records = replace(
+    etches = {
+        "oxide-bhf": {"tool": "glass-bench"},
+        "oxide-hf-10-1": {"tool": "pp-bench", "temperature": koh.temperature},
+        "aluminium-rie": {"after_steps": (rinse,)},
+        "chromium-can": {"after_steps": (solvent,)},
+        "copper-ferric": {"etchant": "own"},
+    }
+    benches = {
+        "glass-bench": replace(RECORDS.tools["hf-bench"], container="glass"),
+        "pp-bench": replace(RECORDS.tools["hf-bench"], container="pp"),
+    }
+    acid = replace(RECORDS.chemicals["hf-49"], id="hf-40", precaution="mineral-acids")
+    titanium = RECORDS.etchants["hf-h2o2-ti"]
+    parts = tuple(replace(one, chemical=one.chemical.replace("hf-49", "hf-40")) for one in titanium.parts)
+    return replace(
         RECORDS,
-        chemicals={**RECORDS.chemicals, "hf-49": acid},
-        etchants={**RECORDS.etchants, "hf-10-1": bath},
+        chemicals={**RECORDS.chemicals, "hf-40": acid},
+        etchants={
+            **RECORDS.etchants,
+            "own": own,
+            "hf-h2o2-ti": replace(titanium, parts=parts, precaution="oxidising-mixtures"),
+        },
+        tools={**RECORDS.tools, **benches},
+        etches=RECORDS.etches | {one: replace(RECORDS.etches[one], **new) for one, new in etches.items()},
     )
-    return plan_safety(records, "hf-10-1", Method.WET, ["sio2-thermal-wet"])
 
 
-def _bare_aluminium() -> PlanSafety:
-    name = next(
-        one.id for one in RECORDS.etches.values() if one.etchant == "plasma-cl2-bcl3-lab" and one.after_steps
-    )
-    only_rinse = (AfterStep(what="Rinse", kind=AfterStepKind.RINSE),)
-    records = _with_etch(name, after_steps=only_rinse)
-    return plan_safety(records, "plasma-cl2-bcl3-lab", Method.PLASMA, ["al-si"], etch_id=name)
+@functools.cache
+def _facts(spoiled: bool) -> PlanFacts:
+    return gather(_dangerous_lab() if spoiled else RECORDS, DAY)
 
 
-def _ceric_then_solvent() -> PlanSafety:
-    steps = (AfterStep(what="Dry from isopropanol", kind=AfterStepKind.DRY, chemical="ipa"),)
-    records = _with_etch("chromium-can", after_steps=steps)
-    etchant = records.etches["chromium-can"].etchant
-    return plan_safety(records, etchant, Method.WET, ["cr"], etch_id="chromium-can")
+@dataclass(frozen=True)
+class Meets:
+    """A recipe of the lab on a sample, in the demonstration lab or in the spoiled one."""
 
+    recipe: str
+    layers: Layers
+    steps: tuple[dict[str, str], ...] = ()
+    bond: str | None = None
+    spoiled: bool = False
 
-def _own_mixture() -> PlanSafety:
-    parts = (Part(chemical="hno3-70", amount="1 part"), Part(chemical="ipa", amount="1 part"))
-    mixture = replace(RECORDS.etchants["cu-hno3"], id="own", origin=Origin.LAB, parts=parts)
-    records = replace(RECORDS, etchants={**RECORDS.etchants, "own": mixture})
-    return plan_safety(records, "own", Method.WET, ["cu"])
+    def stage(self) -> StagePlan:
+        """Plan it, and return the last stage."""
+        data: dict[str, object] = {"layers": self.layers, "steps": list(self.steps)}
+        if self.bond:
+            data["mount"] = {"bond": self.bond}
+        sample = Sample.from_raw(data, "sample.yaml", Origin.LAB)
+        facts = _facts(self.spoiled)
+        return plan(facts, plan_sample(sample, facts.defaults), sample.steps, confidence=0.9).stages[-1]
 
 
 @dataclass(frozen=True)
@@ -130,7 +146,7 @@ class Danger:
     name: str
     files: dict[str, str]
     rule: str
-    plan: Callable[[], PlanSafety]
+    plan: Meets
     is_caution: bool = False
 
 
@@ -148,25 +164,31 @@ def _sample_file(**more: str) -> str:
     return _HEAD + text + more.get("mount", "") + "steps:\n" + more["steps"]
 
 
+def _then(treat: str, etchant: str) -> tuple[dict[str, str], ...]:
+    return ({"treat": treat, "etchant": etchant}, {"etch": "any"})
+
+
+_OXIDE = {"film": "sio2-thermal-wet", "thickness": "1 um", "role": "under"}
+_PHOSPHIDE = {"film": "inp", "thickness": "350 um", "role": "under"}
 _PIRANHA = "  - {treat: clean, etchant: piranha, time: 10 min}\n"
 DANGERS = [
     Danger(
         "acetone-wet into piranha",
         {"samples/a.yaml": _sample_file(steps="  - {treat: strip, etchant: acetone}\n" + _PIRANHA)},
         "steps-must-not-meet",
-        lambda: _plan("piranha", steps=[{"treat": "strip", "etchant": "acetone"}, {"etch": "any"}]),
+        Meets("resist-strip-piranha", _resist("1.4 um"), _then("strip", "acetone")),
     ),
     Danger(
         "ten micrometres of resist into piranha",
         {"samples/b.yaml": _sample_file(thick="10 um", steps=_PIRANHA)},
         "thick-organic",
-        lambda: _plan("piranha", thick="10 um"),
+        Meets("resist-strip-piranha", _resist("10 um")),
     ),
     Danger(
         "wax-mounted sample into piranha",
         {"samples/c.yaml": _sample_file(mount="mount: {bond: mounting wax}\n", steps=_PIRANHA)},
         "bond-in-oxidiser",
-        lambda: _plan("piranha", mount={"bond": "mounting wax"}),
+        Meets("resist-strip-piranha", _resist("1.4 um"), bond="mounting wax"),
     ),
     Danger(
         "buffered HF into sodium hydroxide without a rinse",
@@ -178,7 +200,7 @@ DANGERS = [
             )
         },
         "steps-must-not-meet",
-        lambda: _plan("koh-30", steps=[{"treat": "clean", "etchant": "bhf-5-1"}, {"etch": "any"}]),
+        Meets("silicon-koh", _layers("sin-lpcvd", "si-100", _OXIDE), _then("clean", "bhf-5-1")),
     ),
     Danger(
         "HF in a glass tank",
@@ -187,7 +209,7 @@ DANGERS = [
             "etches/e.yaml": _etch("bhf-5-1", "sio2-thermal-wet", _RINSE + _WASTE, "glass-bench"),
         },
         "container-attacked",
-        _glass_bench,
+        Meets("oxide-bhf", _layers("resist-positive-a", "sio2-thermal-wet"), spoiled=True),
     ),
     Danger(
         "HF at 80 degC in polypropylene",
@@ -198,7 +220,7 @@ DANGERS = [
             ),
         },
         "bath-over-limit",
-        _warm_polypropylene,
+        Meets("oxide-hf-10-1", _layers("resist-positive-a", "sio2-thermal-wet"), spoiled=True),
     ),
     Danger(
         "HF with the first aid of ordinary acids",
@@ -212,7 +234,7 @@ DANGERS = [
             "trust: recalled\nsource: [common-practice]\n",
         },
         "hf-without-first-aid",
-        _ordinary_first_aid,
+        Meets("titanium-hf-peroxide", _layers("resist-positive-a", "ti"), spoiled=True),
     ),
     Danger(
         "aluminium out of chlorine without passivation",
@@ -227,7 +249,7 @@ DANGERS = [
             )
         },
         "chlorine-on-aluminium",
-        _bare_aluminium,
+        Meets("aluminium-rie", _layers("resist-positive-a", "al-cu"), spoiled=True),
     ),
     Danger(
         "indium phosphide in hydrochloric acid",
@@ -244,7 +266,7 @@ DANGERS = [
             ),
         },
         "film-gives-gas",
-        lambda: _plan("hcl-8m", under="inp"),
+        Meets("ito-hydrochloric", _layers("resist-positive-a", "ito", _PHOSPHIDE)),
     ),
     Danger(
         "nitric acid mixed with isopropanol",
@@ -254,7 +276,7 @@ DANGERS = [
             "  - {chemical: ipa, amount: 3 parts}\ntrust: recalled\nsource: [common-practice]\n"
         },
         "forbidden-mixture",
-        _own_mixture,
+        Meets("copper-ferric", _layers("resist-positive-a", "cu"), spoiled=True),
     ),
     Danger(
         "ceric nitrate, then dried from isopropanol",
@@ -266,7 +288,7 @@ DANGERS = [
             )
         },
         "steps-must-not-meet",
-        _ceric_then_solvent,
+        Meets("chromium-can", _layers("resist-positive-a", "cr"), spoiled=True),
     ),
     Danger(
         "wet with isopropanol into the oxygen plasma",
@@ -276,7 +298,7 @@ DANGERS = [
             )
         },
         "steps-must-not-meet",
-        lambda: _plan("plasma-o2-ash", steps=[{"treat": "clean", "etchant": "isopropanol"}, {"etch": "any"}]),
+        Meets("resist-ash", _resist("1.4 um"), _then("clean", "isopropanol")),
     ),
     Danger(
         "gold into a shared HF bath",
@@ -290,7 +312,7 @@ DANGERS = [
             )
         },
         "plating-metal-in-hf",
-        lambda: _plan("bhf-5-1", mask="au"),
+        Meets("oxide-bhf-slow", _layers("au", "sio2-thermal-wet")),
         is_caution=True,
     ),
 ]
@@ -314,15 +336,32 @@ def test_the_check_of_records_catches_it(danger: Danger, tmp_path: Path) -> None
 
 @pytest.mark.parametrize("danger", DANGERS, ids=lambda one: one.name)
 def test_the_plan_catches_it(danger: Danger) -> None:
-    """The same danger refuses the etchant in a plan, or is its caution."""
-    found = danger.plan()
-    assert bool(found.forbidden) is not danger.is_caution, found
-    codes = {finding.code for finding in found.findings}
-    expected = {
-        "steps-must-not-meet": "unrinsed-steps",
-        "film-gives-gas": "film-meets-etchant",
-    }.get(danger.rule, danger.rule)
-    assert expected in codes, codes
+    """The same danger leaves the recipe out of the plan for safety, or stands among its cautions."""
+    stage = danger.plan.stage()
+    if danger.is_caution:
+        option = next(one for one in stage.options if one.recipe == danger.plan.recipe)
+        assert NoteCode.GAS in {note.code for note in option.notes}
+        return
+    reasons = {one.recipe: one.reason.code for one in stage.excluded}
+    assert reasons.get(danger.plan.recipe) in (ExcludedCode.SAFETY, ExcludedCode.MEETING), reasons
+
+
+@pytest.mark.parametrize(
+    ("recipe", "layers"),
+    [
+        ("resist-strip-piranha", _resist("1.4 um")),
+        ("silicon-koh", _layers("sin-lpcvd", "si-100", _OXIDE)),
+        ("oxide-bhf", _layers("resist-positive-a", "sio2-thermal-wet")),
+        ("oxide-hf-10-1", _layers("resist-positive-a", "sio2-thermal-wet")),
+        ("aluminium-rie", _layers("resist-positive-a", "al-cu")),
+        ("titanium-hf-peroxide", _layers("resist-positive-a", "ti")),
+        ("chromium-can", _layers("resist-positive-a", "cr")),
+        ("resist-ash", _resist("1.4 um")),
+    ],
+)
+def test_without_the_danger_the_recipe_is_offered(recipe: str, layers: Layers) -> None:
+    """The tests above would also pass if everything were refused: the unspoiled case is an option."""
+    assert recipe in {option.recipe for option in Meets(recipe, layers).stage().options}
 
 
 @pytest.mark.parametrize("etchant", ["piranha", "koh-30"])
@@ -356,8 +395,3 @@ def test_an_arsenide_in_an_acid_without_a_rule_is_a_caution_not_silence() -> Non
     """No record says that sulfuric acid and peroxide give no arsine; so the caution says that it may."""
     found = plan_safety(RECORDS, "gaas-h2so4", Method.WET, ["gaas"])
     assert "film-gas-unknown" in {finding.code for finding in found.findings}
-
-
-def test_the_mixtures_of_the_lab_are_found_by_the_same_rule() -> None:
-    """`plan` and `check` ask one function."""
-    assert mixture_findings(RECORDS, RECORDS.etchants["hcl-ito-lab"]) == ()

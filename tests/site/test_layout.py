@@ -11,7 +11,12 @@ from tests.site.page_kinds import PAGES
 _WINDOWS = {"phone": (360, 780), "zoom 200 %": (640, 450), "zoom 400 %": (320, 256), "tablet": (820, 1180)}
 _TOO_WIDE = """() => {
   const wide = document.documentElement.clientWidth;
-  const inBox = (element) => element.closest('.ew-rows, .ew-formula, .ew-figure, .md-typeset__scrollwrap');
+  const scrolls = (element) => /auto|scroll/.test(getComputedStyle(element).overflowX);
+  const inBox = (element) => {
+    for (let box = element.parentElement; box && box.tagName !== 'ARTICLE'; box = box.parentElement)
+      if (scrolls(box)) return true;
+    return false;
+  };
   const unseen = (element) => !element.getClientRects().length
     || element.closest('svg, .ew-said, .headerlink');
   return [document.documentElement.scrollWidth > wide, ...[...document.querySelectorAll('article *')]

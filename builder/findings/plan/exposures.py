@@ -87,7 +87,7 @@ class Reaching:
 
     @property
     def reaches_back(self) -> bool:
-        """Is the back exposed from the start?"""
+        """Are the back and an open edge exposed from the start?"""
         return self.etching.etchant.state in (State.LIQUID, State.VAPOUR)
 
     def film(self, film: str) -> FilmFacts:
@@ -115,7 +115,13 @@ class Reaching:
 
 def cases(reach: Reaching) -> list[Case]:
     """Return every film that should stay and that the etch reaches, or may reach."""
-    return [case for case in (*_around(reach), *_under(reach)) if _is_reached(case)]
+    found = (*_around(reach), *_under(reach))
+    return [case for case in found if case.role is not Role.TARGET and _is_reached(case)]
+
+
+def later_targets(reach: Reaching) -> list[Case]:
+    """Return the targets of later stages that the etch reaches, or may reach, in its overetch."""
+    return [case for case in _under(reach) if case.role is Role.TARGET and _is_reached(case)]
 
 
 def cases_of_treatment(reach: Reaching, open_films: Sequence[PlanFilm], *, leaves_masks: bool) -> list[Case]:
@@ -182,13 +188,13 @@ def _under(reach: Reaching) -> Iterator[Case]:
         lies_on = reach.stage.below[place + 1].film if place + 1 < len(reach.stage.below) else None
         here = (timer, look)
         edge: tuple[Remark, ...] = ()
-        if reach.is_wet and reach.stage.sample.edge is Edge.OPEN:
+        if reach.reaches_back and reach.stage.sample.edge is Edge.OPEN:
             here = (_from_edge(timer, start_timer), _from_edge(look, start_look))
-        elif reach.is_wet and reach.stage.sample.edge is None:
+        elif reach.reaches_back and reach.stage.sample.edge is None:
             edge = (Remark(CapCode.EDGE),)
         is_kept = film.role is not Role.TARGET
-        if is_kept:
-            yield Case(film, Role.UNDER, *here, next_to_target=place == 0, lies_on=lies_on, caps=edge)
+        role = Role.UNDER if is_kept else Role.TARGET
+        yield Case(film, role, *here, next_to_target=place == 0, lies_on=lies_on, caps=edge)
         if is_kept and reach.film(film.film).noble:
             yield from _under_noble(reach, film, lies_on)
         timer, look = _beneath(reach, film, *here)

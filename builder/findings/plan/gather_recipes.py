@@ -38,7 +38,8 @@ def etch_facts(records: LabRecords, etch: Etch, levels: Sequence[float]) -> Etch
             low=ratio.low, mid=ratio.mid, high=ratio.high, basis=ratio.basis
         ),
         masks=tuple(
-            MaskFact(film=mask.film, on=mask.on, longest_s=mask.longest_time_held.number) for mask in etch.masks
+            MaskFact(film=mask.film, on=mask.on, longest_s=mask.longest_time_held.number)
+            for mask in etch.masks
         ),
         gas=of_recipe_by_film(records, etch), forbidden=forbidden,
         cautions=cautions,

@@ -89,14 +89,11 @@ def of_bond(records: LabRecords, etchant: str) -> tuple[GasFact, ...]:
 
 
 def meetings_of_steps(records: LabRecords) -> tuple[MeetingFact, ...]:
-    """Return, by rule, the liquid etchants where the second must not meet what is left of the first."""
-    present = {
-        id: etchant_presence(records, id)
-        for id, etchant in sorted(records.etchants.items())
-        if etchant.state is State.LIQUID
-    }
+    """Return, by rule, the etchants that must not meet what is left of a liquid before them."""
+    present = {id: etchant_presence(records, id) for id in sorted(records.etchants)}
+    liquids = {id: one for id, one in present.items() if records.etchants[id].state is State.LIQUID}
     pairs: dict[str, list[tuple[str, ...]]] = {}
-    for first, carried in present.items():
+    for first, carried in liquids.items():
         for second, here in present.items():
             for met in gravest(meetings(records, here, carried)):
                 pairs.setdefault(met.rule.id, []).append((first, second))

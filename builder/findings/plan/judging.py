@@ -60,7 +60,8 @@ def judge(
     return FilmRow(
         film=film.id, role=case.role, thickness_nm=case.film.thickness_nm, exposure=case.by_timer,
         loss=span, loss_by_look=span_look, allowed_nm=allowed,
-        verdict=_final(word, caps, lost), verdict_by_look=_final(word_look, caps, lost_look),
+        verdict=_final(word, case.by_timer, caps, lost),
+        verdict_by_look=_final(word_look, case.by_look, caps, lost_look),
         ground=word.ground, ground_by_look=word_look.ground, rank=known.rank, effects=known.adverse,
         caps=caps, lost=lost, hint=known.hint, assumed=case.film.assumed, spent_nm=case.film.spent_nm,
     )  # fmt: skip
@@ -138,12 +139,12 @@ def _lost_above(reach: Reaching, case: Case) -> float:
     return left if of_least is None else min(left, of_least)
 
 
-def _final(word: Word, caps: Sequence[Remark], lost: Remark | None) -> Verdict:
+def _final(word: Word, exposure: Exposure | None, caps: Sequence[Remark], lost: Remark | None) -> Verdict:
     if lost is not None:
         return Verdict.LOST
     if any(cap.code == CapCode.BACK for cap in caps):
         # What covers the back decides, and nobody said what does: neither safe nor lost.
-        return Verdict.BORDERLINE
+        return Verdict.UNMEASURED if exposure is None else Verdict.BORDERLINE
     return capped(word.verdict) if caps else word.verdict
 
 
@@ -234,7 +235,7 @@ def worst_of(rows: Sequence[FilmRow], best: Verdict, *, by_look: bool = False) -
 
 
 def scaled(band: RateBand | None, ratio: Span) -> RateBand | None:
-    """Return a rate sideways: each end of the rate times that of the ratio; None where the ratio is unknown."""
+    """Return a rate sideways: each end times that of the ratio; None where the ratio is unknown."""
     if band is None or ratio.low is None:
         return None
     mid = None if band.mid is None or ratio.mid is None else band.mid * ratio.mid

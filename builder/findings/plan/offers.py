@@ -76,7 +76,8 @@ def _other_reasons(
 ) -> Iterator[Remark]:
     if recipe.status is Status.RETIRED:
         yield Remark(ExcludedCode.RETIRED)
-    for film in [*sample.layers, *sample.exposed, *([sample.back] if sample.back else [])]:
+    exposed = sorted(sample.exposed, key=lambda film: film.film)  # the order of listing is no reason
+    for film in [*sample.layers, *exposed, *([sample.back] if sample.back else [])]:
         words = facts.refused[recipe.tool].get(film.film)
         if words is not None:
             yield Remark(ExcludedCode.TOOL_REFUSES, {"film": film.film, "words": words})

@@ -9,6 +9,7 @@ from collections.abc import Iterator, Sequence
 from builder.engine import (
     Cut,
     Rank,
+    RateBand,
     Span,
     Verdict,
     end_mode,
@@ -21,11 +22,19 @@ from builder.engine.plan_rules import GOOD_MARGIN, ISOTROPIC_UNDERCUT, RUN_SPAN
 from builder.findings.plan.couples import couplings
 from builder.findings.plan.defaults import default_phi
 from builder.findings.plan.evidence import Asked, Etching, Evidence, evidence
-from builder.findings.plan.exposures import Reaching, Timing, cases
+from builder.findings.plan.exposures import Reaching, Timing, cases, later_targets
 from builder.findings.plan.facts import EtchFacts, GasFact, PlanFacts
 from builder.findings.plan.judging import PlanCaps, judge, scaled, without_offset, worst_of
-from builder.findings.plan.result import CapCode, FilmRow, NoteCode, Option, Remark, UnstatedCode
-from builder.findings.plan.sample import PlanSample, Stage
+from builder.findings.plan.result import (
+    CapCode,
+    FilmRow,
+    LaterTarget,
+    NoteCode,
+    Option,
+    Remark,
+    UnstatedCode,
+)
+from builder.findings.plan.sample import PlanFilm, PlanSample, Stage
 from builder.records.terms import Method, Role, State, Status
 
 
@@ -61,26 +70,57 @@ def plan_option(facts: PlanFacts, etching: Etching, stage: Stage, asked: Asked) 
         proven=recipe is not None and recipe.status is Status.PROVEN and known.rank is Rank.OWN,
         hazard=etching.etchant.hazard, has_margin=_has_margin(rows),
         phi=timing.cut.nonuniformity, offset_s=timing.cut.offset_s, overetch=timing.cut.overetch,
+        later=tuple(_later(reach)),
     )  # fmt: skip
+
+
+def _later(reach: Reaching) -> Iterator[LaterTarget]:
+    for case in later_targets(reach):
+        film, phi = case.film, reach.timing.cut.nonuniformity
+        lost = loss(reach.evidence(film.film).band, case.by_timer, phi)
+        yield LaterTarget(film.film, film.thickness_nm, lost.high)
 
 
 def timing_of(facts: PlanFacts, etching: Etching, stage: Stage, known: Evidence) -> Timing:
     """Return the times at which the target clears, with what fixes them."""
     recipe, target = etching.recipe, stage.target
-    depth = stage.sample.depth_nm
-    left = target.thickness_nm if target.spent_nm is None else target.thickness_nm - target.spent_nm
-    through = depth is None or depth >= left
+    depth, through = stage.sample.depth_nm, is_through(stage.sample, target)
+    left, tolerance = left_of(target)
+    band = known.band
+    if target.spent_nm is None and band is not None:
+        # Half of what may be left is no likely thickness, so no time is likely either.
+        band = RateBand(band.low, None, band.high)
     cut = Cut(
         depth_nm=left if through or depth is None else depth,
         thickness_nm=left,
-        tolerance=target.tolerance,
+        tolerance=tolerance,
         nonuniformity=phi_of(facts, etching),
         offset_s=0.0 if recipe is None else recipe.offset_s,
         overetch=0.0 if recipe is None else recipe.overetch,
         reaction_s=reaction_of(facts, etching),
         through=through,
     )
-    return Timing(known.band, cut, schedule(known.band, cut))
+    return Timing(band, cut, schedule(band, cut))
+
+
+def is_through(sample: PlanSample, target: PlanFilm) -> bool:
+    """Tell whether the whole target is removed."""
+    return sample.depth_nm is None or sample.depth_nm >= target.thickness_nm
+
+
+def left_of(target: PlanFilm) -> tuple[float, float]:
+    """
+    Return the middle of what is left of a target, nm, and the half-width around it as a fraction.
+
+    Earlier steps took between nothing and their worst loss, or nobody knows how much.
+    """
+    if target.spent_nm == 0:
+        return target.thickness_nm, target.tolerance
+    most = target.thickness_nm * (1 + target.tolerance)
+    least = 0.0
+    if target.spent_nm is not None:
+        least = max(0.0, target.thickness_nm * (1 - target.tolerance) - target.spent_nm)
+    return (most + least) / 2, (most - least) / (most + least)
 
 
 def phi_of(facts: PlanFacts, etching: Etching) -> float:
@@ -198,15 +238,16 @@ def unstated(reach: Reaching, rows: Sequence[FilmRow]) -> Iterator[Remark]:
     sample = reach.stage.sample
     if reach.reaches_back and sample.back is None and not sample.back_protected:
         yield Remark(UnstatedCode.BACK)
-    if reach.is_wet and sample.edge is None and any(row.role is Role.UNDER for row in rows):
+    if reach.reaches_back and sample.edge is None and any(row.role is Role.UNDER for row in rows):
         yield Remark(UnstatedCode.EDGE)
     for row in rows:
         for cap in row.caps:
             if cap.code == CapCode.UNDER_NOBLE:
                 yield Remark(UnstatedCode.UNDER_NOBLE, {"film": cap.params["film"]})
-        if row.allowed_nm is None and not row.assumed:
+        # What an earlier step took is not known there, and no allowance would help.
+        if row.allowed_nm is None and not row.assumed and row.spent_nm is not None:
             yield Remark(UnstatedCode.ALLOWED, {"film": row.film})
-    if sample.temperature is None and reach.etching.temperature is None:
+    if reach.asked.temperature_k is None and reach.etching.temperature is None:
         yield Remark(UnstatedCode.TEMPERATURE)
     if sample.line_nm is None and reach.stage.masks and is_isotropic(reach):
         yield Remark(UnstatedCode.LINE)
@@ -226,6 +267,7 @@ def ordered_rows(rows: Iterator[FilmRow]) -> tuple[FilmRow, ...]:
             row.role,
             row.film,
             row.thickness_nm,
+            repr(row),  # no two rows change places because they were listed so
         ),
     )
     kept: list[FilmRow] = []

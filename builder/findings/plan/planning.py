@@ -21,7 +21,15 @@ from builder.findings.plan.result import (
     Remark,
     StagePlan,
 )
-from builder.findings.plan.sample import PlanFilm, PlanSample, Stage, stages_of, worn
+from builder.findings.plan.sample import (
+    PlanFilm,
+    PlanSample,
+    Stage,
+    rounded,
+    stages_of,
+    temperature_span,
+    worn,
+)
 from builder.findings.plan.treatment import treatment_option
 from builder.records.samples import ANY_ETCH, SequenceStep
 from builder.records.terms import Role, Treatment
@@ -82,7 +90,8 @@ def _sequence(
     stages: list[StagePlan] = []
     state = _State(sample, 0, None)
     for number, step in enumerate(steps, start=1):
-        here = asked if step.temperature is None else Asked(asked.confidence, span_of(step.temperature))
+        own = temperature_span(span_of(step.temperature))
+        here = asked if own is None else Asked(asked.confidence, own)
         if step.treat is not None:
             planned = _treat_stage(facts, state, step, here, number)
             state = _after_treatment(facts, state, planned, step)
@@ -117,7 +126,7 @@ def _treat_stage(facts: PlanFacts, state: _State, step: SequenceStep, asked: Ask
     assert step.treat is not None
     if step.etchant is None:
         return StagePlan(number, None, str(step.treat), None, (), ())
-    time_s = None if step.time is None else step.time.number
+    time_s = None if step.time is None else rounded(step.time.number)
     option = treatment_option(facts, state.sample, state.removed, step.treat, step.etchant, time_s, asked)
     options, clashing = _without_clashes(facts, (option,), state.wet_with)
     return StagePlan(number, None, str(step.treat), step.etchant, options, clashing)
@@ -152,8 +161,18 @@ def _met(facts: PlanFacts, first: str | None, second: str) -> list[MeetingFact]:
 def _after_etch(state: _State, stage: StagePlan) -> _State:
     """The films as the best option leaves them: each with its worst loss."""
     option = stage.options[0] if stage.options else None
+    after = _cut(_worn_sample(state.sample, option), state.removed)
     # An etch ends with its own rinse; what it was etched with is no longer on the sample.
-    return _State(_worn_sample(state.sample, option), state.removed + 1, None)
+    return _State(after, state.removed + 1, None)
+
+
+def _cut(sample: PlanSample, removed: int) -> PlanSample:
+    """What is left of a target has fresh edges: what its open face had lost went with it."""
+    target = stages_of(sample)[removed].target
+    return replace(
+        sample,
+        layers=tuple(replace(film, spent_nm=0.0) if film is target else film for film in sample.layers),
+    )
 
 
 def _after_treatment(facts: PlanFacts, state: _State, stage: StagePlan, step: SequenceStep) -> _State:
@@ -164,29 +183,28 @@ def _after_treatment(facts: PlanFacts, state: _State, stage: StagePlan, step: Se
     option = stage.options[0] if stage.options else None
     after = _worn_sample(state.sample, option)
     if step.treat is Treatment.STRIP:
-        after = _stripped(facts, after)
+        after = _stripped(facts, after, state.removed)
     return _State(after, state.removed, wet_with)
 
 
-def _stripped(facts: PlanFacts, sample: PlanSample) -> PlanSample:
-    """A strip leaves no resist."""
+def _stripped(facts: PlanFacts, sample: PlanSample, removed: int) -> PlanSample:
+    """A strip leaves no resist; what is left of the targets under it then lies open."""
     layers = tuple(
         film
         for film in sample.layers
         if film.role is not Role.MASK or facts.films[film.film].family not in ORGANIC
     )
-    return replace(sample, layers=layers)
+    if len(layers) == len(sample.layers) or any(film.role is Role.MASK for film in layers):
+        return replace(sample, layers=layers)
+    bared = [replace(stage.target, role=Role.EXPOSED) for stage in stages_of(sample)[:removed]]
+    return replace(sample, layers=layers, exposed=(*sample.exposed, *bared))
 
 
 def _worn_sample(sample: PlanSample, option: Option | None) -> PlanSample:
     def after(film: PlanFilm) -> PlanFilm:
         if option is None:
             return worn(film, None)
-        losses = [
-            row.loss.high
-            for row in option.rows
-            if row.film == film.film and row.role == film.role and row.thickness_nm == film.thickness_nm
-        ]
+        losses = _losses(option, film, is_bottom=film is sample.layers[-1])
         if not losses:
             return film
         if film.may_vanish and None in losses:
@@ -199,6 +217,30 @@ def _worn_sample(sample: PlanSample, option: Option | None) -> PlanSample:
         exposed=tuple(map(after, sample.exposed)),
         back=None if sample.back is None else after(sample.back),
     )
+
+
+def _losses(option: Option, film: PlanFilm, *, is_bottom: bool) -> list[float | None]:
+    """
+    Return every worst loss on record of a film: the bottom layer loses at the back too.
+
+    A target that is not yet removed is eaten in the windows, by a treatment or another target's overetch;
+    afterwards at the edges that it was cut to.
+    """
+    roles = {Role.UNDER, Role.EXPOSED} if film.role is Role.TARGET else {film.role}
+    roles |= {Role.BACK} if is_bottom else set()
+    losses = [
+        row.loss.high
+        for row in option.rows
+        if (row.film, row.thickness_nm) == (film.film, film.thickness_nm)
+        and row.role in roles
+        and not (row.assumed and row.role is Role.BACK)
+    ]
+    later = [
+        one.loss_nm
+        for one in option.later
+        if film.role is Role.TARGET and (one.film, one.thickness_nm) == (film.film, film.thickness_nm)
+    ]
+    return [*losses, *later]
 
 
 def verdict_of(planned: Plan) -> Verdict:

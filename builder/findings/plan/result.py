@@ -135,6 +135,15 @@ class FilmRow:
 
 
 @dataclass(frozen=True)
+class LaterTarget:
+    """What an etch takes of a target that a later stage removes; `loss_nm` at worst, None unknown."""
+
+    film: str
+    thickness_nm: float
+    loss_nm: float | None
+
+
+@dataclass(frozen=True)
 class Option:
     """One etch for one target. `recipe` None: an etchant alone, by published facts."""
 
@@ -158,6 +167,7 @@ class Option:
     phi: float
     offset_s: float
     overetch: float
+    later: tuple[LaterTarget, ...] = ()
 
 
 @dataclass(frozen=True)

@@ -109,10 +109,10 @@ def plan_sample(sample: Sample, defaults: Defaults, temperature_k: Span | None =
         methods=tuple(str(method) for method in limits.methods),
         tools=limits.tools,
         etchants=limits.etchants,
-        hottest_k=None if hottest is None else hottest.high,
+        hottest_k=None if hottest is None else rounded(hottest.high),
         carrier=sample.mount.carrier,
         bond=sample.mount.bond,
-        temperature=temperature_k or span_of(sample.temperature),
+        temperature=temperature_span(temperature_k or span_of(sample.temperature)),
     )
 
 
@@ -135,6 +135,11 @@ def worn(film: PlanFilm, loss_nm: float | None) -> PlanFilm:
 def rounded(value: float) -> float:
     """Return a number to 12 digits: the unit it was written in must leave no trace."""
     return float(f"{value:.{_DIGITS}g}")
+
+
+def temperature_span(span: Span | None) -> Span | None:
+    """Return a span of temperatures with no trace of the unit it was written in."""
+    return None if span is None else Span(low=rounded(span.low), high=rounded(span.high))
 
 
 def _films(films: Iterable[SampleFilm], defaults: Defaults) -> tuple[PlanFilm, ...]:

@@ -16,8 +16,8 @@ from pathlib import Path
 
 from builder.findings.plan.facts import FORMAT, FilmFacts, PlanFacts
 from builder.findings.plan.stored import facts_from_plain, plain
-from builder.records.film_names import FilmNames
 from builder.reading.lab_tree import find_shipped
+from builder.records.film_names import FilmNames
 
 STORE = Path(".etchwright")
 """Folder of the store within a lab."""
@@ -83,7 +83,7 @@ def save(lab: Path, key: str, facts: PlanFacts) -> None:
 
 
 def key_of(lab: Path, as_of: str, confidence: float | None, *, reference_only: bool) -> str:
-    """Return what the facts depend on, as one digest: records, schemas, our own modules, and what is asked."""
+    """Return one digest of what the facts depend on: records, schemas, our own modules, what is asked."""
     asked = (FORMAT, as_of, confidence, reference_only)
     digest = hashlib.sha256(repr(asked).encode())
     for path in _inputs(lab):

@@ -10,7 +10,7 @@ from builder.findings.plan.evidence import Asked, Etching
 from builder.findings.plan.exposures import Reaching, Timing, cases_of_treatment
 from builder.findings.plan.facts import PlanFacts
 from builder.findings.plan.judging import PlanCaps, judge, worst_of
-from builder.findings.plan.option import gas_facts, ordered_rows, phi_of, reaction_of, unstated
+from builder.findings.plan.option import gas_facts, is_through, ordered_rows, phi_of, reaction_of, unstated
 from builder.findings.plan.result import NoteCode, Option, Remark
 from builder.findings.plan.sample import PlanFilm, PlanSample, Stage, stages_of
 from builder.records.terms import Role, Treatment
@@ -42,7 +42,8 @@ def treatment_option(
         for case in cases_of_treatment(reach, _open_films(sample, stage, removed), leaves_masks=leaves_masks)
     ]
     couples = couplings(reach, found)
-    caps = PlanCaps(Rank.OWN, couples.plan_caps, _UNKNOWN, _UNKNOWN)
+    # The step sets the time, so no target's rate enters; but no own run has tried this chamber either.
+    caps = PlanCaps(Rank.LITERATURE, couples.plan_caps, _UNKNOWN, _UNKNOWN)
     rows = ordered_rows(
         judge(reach, case, caps, couples.caps.get(case.film.film, ()), couples.lost.get(case.film.film))
         for case in found
@@ -63,15 +64,19 @@ def treatment_option(
 
 
 def _stage(sample: PlanSample, removed: int) -> Stage:
-    """The stage that comes next; after the last target, what is below it lies open."""
+    """The stage that comes next; after the last target, its edges and what is below it lie open."""
     stages = stages_of(sample)
-    return stages[min(removed, len(stages) - 1)]
+    if removed < len(stages):
+        return stages[removed]
+    last = stages[-1]
+    return replace(last, above=(last.target, *last.above))
 
 
 def _open_films(sample: PlanSample, stage: Stage, removed: int) -> tuple[PlanFilm, ...]:
     """Films in the windows, top first: the next target and what is below it, or what the last one bared."""
     below = tuple(film for film in stage.below if film.role is not Role.TARGET)
-    return (stage.target, *stage.below) if removed < len(stages_of(sample)) else below
+    is_there = removed < len(stages_of(sample)) or not is_through(sample, stage.target)
+    return (stage.target, *stage.below) if is_there else below
 
 
 def _fixed_timing(facts: PlanFacts, etching: Etching, stage: Stage, time_s: float | None) -> Timing:

@@ -8,7 +8,7 @@ orders plans by the lesser hazard.
 from builder.checking.rules_safety_finding import SafetyFinding
 from builder.checking.rules_safety_meetings import WetStep, film_gas, forbidden_pairs, sequence_findings
 from builder.findings.safety.hazards import EtchantHazards, cautions_of, etchant_hazards
-from builder.findings.safety.plan import PlanSafety, plan_safety, sample_safety
+from builder.findings.safety.plan import PlanSafety, plan_safety
 from builder.findings.safety.score import hazard_score
 
 __all__ = [
@@ -22,6 +22,5 @@ __all__ = [
     "forbidden_pairs",
     "hazard_score",
     "plan_safety",
-    "sample_safety",
     "sequence_findings",
 ]

@@ -8,13 +8,11 @@ from dataclasses import dataclass
 from builder.checking.rules_safety_finding import SafetyFinding
 from builder.checking.rules_safety_meetings import WetStep
 from builder.checking.rules_safety_plan import EtchSituation, recipe_sequence, situation_findings
-from builder.checking.rules_safety_sequence import steps_before
 from builder.findings.safety.hazards import cautions_of
 from builder.records.conversion import quantity_of
 from builder.records.etches import Etch
 from builder.records.lab import LabRecords
 from builder.records.quantities import Quantity
-from builder.records.samples import Sample
 from builder.records.terms import Method
 from builder.records.unit_table import Dimension
 
@@ -66,25 +64,6 @@ def plan_safety(  # noqa: PLR0913  each keyword is one thing that may be known
     if etch is not None:
         findings += tuple(one for one in recipe_sequence(records, etch) if one not in findings)
     return _plan_safety(records, etchant_id, method, findings)
-
-
-def sample_safety(
-    records: LabRecords, etchant_id: str, method: Method, sample: Sample, *, etch_id: str | None = None
-) -> PlanSafety:
-    """Return `plan_safety` for a sample, with its films, thicknesses, mount and the steps it comes from."""
-    thickest: dict[str, float] = {}
-    for film in sample.films:
-        thickest[film.film] = max(film.thickness_nm, thickest.get(film.film, 0.0))
-    return plan_safety(
-        records,
-        etchant_id,
-        method,
-        [film.film for film in sample.films],
-        etch_id=etch_id,
-        thickness_nm=thickest,
-        bond=sample.mount.bond,
-        before=steps_before(records, sample.steps),
-    )
 
 
 def _temperature(records: LabRecords, etchant_id: str, etch: Etch | None) -> Quantity | None:

@@ -9,7 +9,7 @@
   const FORMAT = 1;
   const FACTS_FORMAT = 1;
 
-  const FILM = { is_family: false, members: [], barrier: "unknown", electrical: null, noble: false, similar: [], adhesion: [], names: [] };
+  const FILM = { is_family: false, members: [], barrier: "unknown", electrical: null, noble: false, similar: [], adhesion: [], names: [], formula: "" };
   const ETCHANT = {
     isotropic: false, gas_bubbles: false, hf_vapour: false, temperature: null, hazard: 0, cautions: [],
     rows: {}, said: {}, gas: {}, alone: {}, bond: [],

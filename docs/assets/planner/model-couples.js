@@ -17,15 +17,23 @@
     const kept = new Set(found.map((one) => one.film.film));
     const laterTargets = reach.stage.below.filter((film) => film.role === "target").map((film) => film.film);
     const wet = ew.evidence.distinct([...kept, reach.stage.target.film, ...laterTargets]).sort(byCode);
+    const supposed = supposedFilms(found);
     wet.forEach(function (/** @type {string} */ one, /** @type {number} */ place) {
       for (const other of wet.slice(place + 1)) {
-        if (!isBattery(reach.facts, one, other)) continue;
+        if (!isBattery(reach.facts, one, other) || (supposed.has(one) && supposed.has(other))) continue;
         const record = coupleOf(reach.facts, one, other, reach.etching.etchant.id);
         if (record) apply(record, [one, other], kept, result);
         else cap(ew.films.remark("couple", { one: one, other: other }), [one, other], kept, result);
       }
     });
     return result;
+  }
+
+  /** Adhesion layers that may lie under a noble metal: one or another of them, so never a pair. @param {Case[]} found */
+  function supposedFilms(found) {
+    const named = new Set(found.filter((one) => !one.film.assumed).map((one) => one.film.film));
+    const maybe = found.filter((one) => one.caps.some((cap) => cap.code === "under-noble")).map((one) => one.film.film);
+    return new Set(maybe.filter((film) => !named.has(film)));
   }
 
   /** Order of plain ids, the same in both languages. @param {string} one @param {string} other */

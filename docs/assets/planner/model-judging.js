@@ -44,14 +44,22 @@
     return remark.code + "\u0000" + pairs.map((name) => name + "=" + remark.params[name]).join(", ");
   }
 
+  /** Are these remarks known to differ by their codes alone? It saves making keys. @param {Remark[]} remarks */
+  function differByCode(remarks) {
+    return remarks.every((one, place) => remarks.findIndex((other) => other.code === one.code) === place);
+  }
+
   /** @param {Remark[]} remarks @returns {Remark[]} */
   function distinctRemarks(remarks) {
-    return Array.from(new Map(remarks.map((one) => [keyOf(one), one])).values());
+    return differByCode(remarks) ? remarks : Array.from(new Map(remarks.map((one) => [keyOf(one), one])).values());
   }
 
   /** @param {Remark[]} caps */
   function sortedCaps(caps) {
-    return caps.length > 1 ? distinctRemarks(caps).sort((one, other) => ew.couples.byCode(keyOf(one), keyOf(other))) : caps;
+    const byCode = ew.couples.byCode;
+    if (differByCode(caps)) return caps.sort((one, other) => byCode(one.code, other.code));
+    const keyed = new Map(caps.map((one) => [keyOf(one), one]));
+    return Array.from(keyed.keys()).sort(byCode).map((key) => /** @type {Remark} */ (keyed.get(key)));
   }
 
   /** What a film may still lose, nm: as stated, or by the lab's default; null where neither says. @param {Reach} reach @param {Case} one */

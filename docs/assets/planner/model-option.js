@@ -20,18 +20,32 @@
     const best = bestWord(known.rank, caps, timing.schedule);
     const verdict = worstOf(rows, best, "verdict");
     const recipe = etching.recipe;
-    return {
+    const option = {
       recipe: recipe ? recipe.id : null, etchant: etching.etchant.id, method: reach.method, verdict: verdict,
       verdictByLook: worstOf(rows, best, "verdictByLook"), target: stage.target.film, targetRank: known.rank,
       targetBand: known.band, targetSources: known.sources, schedule: timing.schedule,
       mode: ew.times.endMode(facts, timing.schedule, verdict === "holds", Boolean(recipe && recipe.endpoint)),
       undercut: undercut, undercutByLook: undercutByLook, rows: rows, planCaps: caps,
-      notes: ew.judging.distinctRemarks([...notes(reach, known), ...couples.notes]),
-      unstated: ew.judging.distinctRemarks(unstated(reach, rows)),
+      notes: /** @type {Remark[]} */ ([]), unstated: /** @type {Remark[]} */ ([]),
       proven: Boolean(recipe && recipe.status === "proven" && known.rank === "own"),
       hazard: etching.etchant.hazard, hasMargin: hasMargin(facts, rows),
       phi: timing.cut.phi, offsetS: timing.cut.offsetS, overetch: timing.cut.overetch,
     };
+    whenAsked(option, "notes", () => ew.judging.distinctRemarks([...notes(reach, known), ...couples.notes]));
+    whenAsked(option, "unstated", () => ew.judging.distinctRemarks(unstated(reach, rows)));
+    return option;
+  }
+
+  /** What only the options that are looked at need is made when it is first asked for. @param {Option} option @param {"notes" | "unstated"} name @param {() => Remark[]} make */
+  function whenAsked(option, name, make) {
+    Object.defineProperty(option, name, {
+      configurable: true, enumerable: true,
+      get() {
+        const value = make();
+        Object.defineProperty(option, name, { value: value, enumerable: true });
+        return value;
+      },
+    });
   }
 
   /** The word before any film has spoken. @param {string} rank @param {Remark[]} caps @param {Schedule} schedule */
@@ -182,11 +196,12 @@
     /** @type {GasFact[]} */
     const found = [];
     for (const film of filmsOf(sample)) {
-      for (const fact of [...(at(own, film.film) || []), ...(at(etchant.gas, film.film) || [])]) {
-        if (fact.from_nm === 0 || film.thicknessNm > fact.from_nm) found.push(fact);
+      for (const facts of [at(own, film.film), at(etchant.gas, film.film)]) {
+        for (const fact of facts || []) if (fact.from_nm === 0 || film.thicknessNm > fact.from_nm) found.push(fact);
       }
     }
     if (sample.bond !== null && facts.bondPattern && facts.bondPattern.test(sample.bond)) found.push(...etchant.bond);
+    if (!found.length) return found;
     const unique = new Map(found.map((fact) => [fact.forbidden + "|" + fact.from_nm + "|" + fact.words, fact]));
     return Array.from(unique.values()).sort(
       (one, other) => Number(other.forbidden) - Number(one.forbidden) || ew.couples.byCode(one.words, other.words),

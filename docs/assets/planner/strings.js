@@ -1,0 +1,238 @@
+// @ts-check
+/*
+ * Sentences of a plan, made of its codes. Twin of builder/views/plan_words.py; `named` turns the id of a film or
+ * an etchant into the name that is shown.
+ */
+(function (ew) {
+  "use strict";
+
+  /** @typedef {(id: string) => string} Named */
+
+  const RANKS = {
+    own: "own runs", literature: "literature", unchecked: "literature, unchecked",
+    statement: "a statement without a number", similar: "a similar film", none: "nothing on record",
+  };
+  const GROUNDS = {
+    "any-loss-accepted": "it may vanish",
+    "no-high-end": "only a lowest rate is known; nothing bounds the loss",
+    "no-allowance": "no allowed loss is stated, and the film is too thin for a default",
+    unchecked: "the number is recalled, not checked",
+    "target-unchecked": "the target's own rate is not checked, so the time is not sure",
+    "beyond-tested-time": "no loss was seen, but nobody tested that long",
+    "statement-resists": "said to withstand it; nobody measured how well",
+    "statement-adverse": "said to suffer in it; no rate on record",
+    "statement-attacks": "said to be attacked",
+    "no-evidence": "nothing on record for this film in this etch",
+    "time-unknown": "nobody knows how long the etch takes, so its loss is unknown",
+  };
+  /** @type {{[code: string]: (p: any, named: Named) => string}} */
+  const CAPS = {
+    adverse: (p) => "on record: it " + p.effect,
+    adhesion: (p, named) => "no record that this mask stays on " + named(p.on) + " in this recipe",
+    "adhesion-time": (p, named) =>
+      "the mask was seen to stay on " + named(p.on) + " for " + time(p.held_s) + " only" +
+      (p.stop_s === null ? "" : ", and the etch may take " + time(p.stop_s)),
+    back: () => "what covers the back is not stated, and the back is wet from the start",
+    barrier: (p, named) => named(p.film) + " is not known to be dense; what etches may pass it to " + named(p.under),
+    "carrier-load": (p, named) => "the carrier is bare " + named(p.film) + " too, and no run had such a load",
+    conflict: () => "one own run contradicts the literature",
+    couple: (p, named) => named(p.one) + " and " + named(p.other) + " are wet together; no record of that couple",
+    "couple-undercut": (p, named) => named(p.one) + " with " + named(p.other) + ": " + clause(p.words),
+    "earlier-loss": () => "nobody knows what an earlier step has taken",
+    edge: () => "whether the sample's edge is open is not stated",
+    family: () => "the film is not known exactly; the worst of those it may be counts",
+    heat: () => "no record of cooling; the mask may get hot",
+    line: (p) => "a line of " + size(p.line_nm) + " may lose " + size(p.undercut_nm) + " from each edge",
+    load: (p) => "a load of " + area(p.load_cm2) + " is far from that of the runs, " + between(area(p.low_cm2), area(p.high_cm2)),
+    "published-chamber": () => "the number is from another chamber, and this one has no own run",
+    "through-wafer": () => "etching through the wafer needs a carrier or a film to stop on",
+    "under-noble": (p, named) => named(p.layer) + " is usual under " + named(p.film) + "; what lies there is not stated",
+    "undercut-assumed": () => "the undercut is a rule of thumb here; this recipe has none on record",
+    "undercut-unknown": () => "how far the edge moves is not on record, and a line width is asked for",
+  };
+  const LIFTS = {
+    adverse: "look at a test piece under the microscope and record what you see",
+    adhesion: "record a mask that stayed on this film, with its preparation and time",
+    "adhesion-time": "run a test piece for longer and record the time the mask held",
+    back: "state the film on the back, or that it is protected",
+    barrier: "record that the film is dense, or that the mask held",
+    "carrier-load": "state the load with the carrier in it, or use a carrier of another film",
+    conflict: "run a second monitor wafer",
+    couple: "etch a piece with both films and record the couple",
+    "couple-undercut": "avoid the contact, or measure the undercut on a test piece",
+    "earlier-loss": "measure the film after the earlier step",
+    edge: "state whether the edge is open, protected or unused",
+    family: "name the film as deposited",
+    heat: "record the recipe's cooling",
+    line: "make the line wider, or pick an etch with less undercut",
+    load: "run a monitor wafer with this load",
+    "published-chamber": "run one monitor wafer of the target in this chamber",
+    "through-wafer": "state the carrier, or the film to stop on",
+    "under-noble": "state the film under it, or that there is none",
+    "undercut-assumed": "measure the undercut and record it in the recipe",
+    "undercut-unknown": "measure the undercut and record it in the recipe",
+  };
+  /** @type {{[code: string]: (p: any, named: Named) => string}} */
+  const LOST = {
+    couple: (p, named) => named(p.one) + " touching " + named(p.other) + ": " + clause(p.words),
+    line: (p) => "a line of " + size(p.line_nm) + " loses at least " + size(p.undercut_nm) + " from each edge and stands on nothing",
+    "mask-fails": (p) => "on record: this mask " + p.effect + " here",
+    roughened: () => "it roughens, and its surface is critical",
+  };
+  /** @type {{[code: string]: (p: any, named: Named) => string}} */
+  const NOTES = {
+    "not-a-target": (p, named) => "The recipe is not meant for " + named(p.film) + "; its rate is on record.",
+    draft: () => "The recipe is a draft: nobody has called it proven.",
+    conflict: () => "Own runs and the literature contradict each other; the own runs count.",
+    far: () => "Own runs were at another temperature and do not count here.",
+    "all-temperatures": () => "No temperature is asked for: the rates span all on record.",
+    "time-outside-runs": (p) =>
+      "The runs lasted " + between(time(p.low_s), time(p.high_s)) + "; up to " + time(p.stop_s) +
+      " nobody has shown that the rate stays the same.",
+    "couple-target": (p, named) => named(p.one) + " with " + named(p.other) + ": " + clause(p.words) + ".",
+    "undercut-assumed": () => "An isotropic etch goes sideways at least as far as down (common practice, no source).",
+    gas: (p) => p.words,
+    meeting: (p, named) => "Rinse well between " + named(p.first) + " and " + named(p.second) + ": " + p.words,
+    hazard: (p) => p.words,
+  };
+  /** @type {{[code: string]: (p: any, named: Named) => string}} */
+  const UNSTATED = {
+    back: () => "the film on the back, or that it is protected",
+    edge: () => "whether the edge is open, protected or unused",
+    "under-noble": (p, named) => "what lies under " + named(p.film) + ", or that nothing does",
+    allowed: (p, named) => "how much of " + named(p.film) + " may go",
+    temperature: () => "the temperature of the etch",
+    load: () => "the open area",
+    line: () => "the width of the narrowest masked line",
+    stop: () => "a carrier, or a film to stop on",
+  };
+  const HINTS = {
+    temperature: "a rate is on record at another temperature",
+    conditions: "a rate or a statement is on record under other conditions",
+  };
+  /** @type {{[code: string]: (p: any, named: Named) => string}} */
+  const EXCLUDED = {
+    "no-evidence": (p, named) =>
+      "nothing on record for " + named(p.film) + " here" + (p.hint === null ? "" : " (" + hintWords(p.hint, named) + ")"),
+    "does-not-etch": (p, named) => "no etching of " + named(p.film) + " was seen",
+    retired: () => "retired",
+    "tool-refuses": (p) => p.words,
+    method: (p) => p.method + " is outside the sample's limits",
+    tool: (p) => p.tool + " is outside the sample's limits",
+    etchant: (p, named) => named(p.etchant) + " is outside the sample's limits",
+    "too-hot": (p) => "runs at " + kelvin(p.recipe_k) + ", and the sample may see " + kelvin(p.limit_k),
+    "other-temperature": (p) => "runs at " + kelvin(p.recipe_k) + ", not at " + kelvin(p.asked_k),
+    safety: (p) => "not allowed: " + p.words,
+    meeting: (p, named) => named(p.first) + " must not be carried into " + named(p.second) + ": " + p.words,
+  };
+
+  const time = (/** @type {number} */ value) => ew.numbers.time(value);
+  const size = (/** @type {number} */ value) => ew.numbers.plainLength(value);
+  const area = (/** @type {number} */ value) => ew.numbers.plain(value) + "\u00a0cm²";
+  const kelvin = (/** @type {number} */ value) => ew.numbers.temperature(value);
+  const between = (/** @type {string} */ low, /** @type {string} */ high) => (low === high ? low : low + " to " + high);
+
+  /** @param {string} words */
+  function clause(words) {
+    const text = words.replace(/\.+$/, "");
+    return text.slice(0, 1).toLowerCase() + text.slice(1);
+  }
+
+  /** @param {string} text */
+  function capital(text) {
+    return text.slice(0, 1).toUpperCase() + text.slice(1);
+  }
+
+  /** Names as a list in words. @param {string[]} names */
+  function listed(names) {
+    return names.length === 1 ? names[0] : names.slice(0, -1).join(", ") + " and " + names[names.length - 1];
+  }
+
+  /** Why a film has its word. @param {FilmRow} row @param {Named} named */
+  function reason(row, named) {
+    if (row.lost) return LOST[row.lost.code](row.lost.params, named);
+    const back = row.caps.find((cap) => cap.code === "back");
+    if (back) return CAPS.back(back.params, named);
+    // What keeps a film from "holds" says nothing where the word is worse anyhow.
+    const caps = row.verdict === "borderline" ? row.caps : [];
+    const couples = caps.filter((cap) => cap.code === "couple");
+    const others = caps.filter((cap) => cap.code !== "couple").map((cap) => CAPS[cap.code](cap.params, named));
+    return [ground(row), ...(couples.length ? [coupleWords(row.film, couples, named)] : []), ...others].join("; ");
+  }
+
+  /** One clause for all couples of a film that have no record. @param {string} film @param {Remark[]} couples @param {Named} named */
+  function coupleWords(film, couples, named) {
+    const partners = new Set(couples.flatMap((cap) => [cap.params.one, cap.params.other]));
+    partners.delete(film);
+    const names = Array.from(partners).sort().map(named);
+    return "wet together with " + listed(names) + ", and no record of that couple";
+  }
+
+  /** @param {FilmRow} row */
+  function ground(row) {
+    if (row.ground === "no-allowance" && row.spentNm === null) return "how much of it may still go is not known";
+    const fixed = GROUNDS[/** @type {keyof typeof GROUNDS} */ (row.ground)];
+    if (fixed) return fixed;
+    const numbers = ew.numbers;
+    const isOpen = row.allowedNm === null || row.allowedNm === Infinity;
+    const allowed = isOpen ? "" : " of " + size(/** @type {number} */ (row.allowedNm)) + " allowed";
+    if (row.ground === "mild-end-exceeds") {
+      const whole = /** @type {number} */ (row.loss.low) >= row.thicknessNm ? " (all of it)" : "";
+      return "even the mild end takes " + numbers.withUnit(numbers.length(row.loss.low, null, null)) + whole + allowed;
+    }
+    const high = row.loss.high === null ? "an unknown amount" : numbers.withUnit(numbers.length(null, null, row.loss.high));
+    return "at worst " + high.replace(/^at most /, "") + allowed;
+  }
+
+  /** @param {string | null} hint @param {Named} named @returns {string} */
+  function hintWords(hint, named) {
+    if (hint === null) return "";
+    if (hint.startsWith("similar:")) return "a similar film is on record: " + named(hint.slice("similar:".length));
+    return HINTS[/** @type {keyof typeof HINTS} */ (hint)];
+  }
+
+  /** The one sentence that stands first. @param {Option} option @param {Named} named */
+  function blocker(option, named) {
+    const row = option.rows[0];
+    if (!row) return withoutFilms(option);
+    if (option.verdict === "holds") return "Every film holds; closest is " + rowName(row, named) + ": " + reason(row, named) + ".";
+    if (option.verdict !== row.verdict) return withoutFilms(option);
+    const verbs = { lost: "is lost", borderline: "may not last", unmeasured: "is unmeasured" };
+    return capital(rowName(row, named)) + " " + verbs[/** @type {keyof typeof verbs} */ (row.verdict)] + ": " + reason(row, named) + ".";
+  }
+
+  /** @param {Option} option */
+  function withoutFilms(option) {
+    if (option.schedule.latestStopS === null) return "How long the etch takes is not on record.";
+    if (option.verdict === "holds") return "No other film is reached.";
+    return "The target's rate rests on " + rankWords(option.targetRank) + ".";
+  }
+
+  /** A film with its place. @param {FilmRow} row @param {Named} named */
+  function rowName(row, named) {
+    const name = named(row.film);
+    if (row.role === "mask") return "the mask " + name;
+    if (row.role === "under") return name + " under the target";
+    if (row.role === "back") return name + " on the back";
+    return row.role === "exposed" ? "exposed " + name : name;
+  }
+
+  /** @param {string} rank */
+  function rankWords(rank) {
+    return RANKS[/** @type {keyof typeof RANKS} */ (rank)];
+  }
+
+  /** What would lift a cap. @param {string} code */
+  function liftWords(code) {
+    return LIFTS[/** @type {keyof typeof LIFTS} */ (code)];
+  }
+
+  const capWords = (/** @type {Remark} */ cap, /** @type {Named} */ named) => CAPS[cap.code](cap.params, named);
+  const noteWords = (/** @type {Remark} */ note, /** @type {Named} */ named) => NOTES[note.code](note.params, named);
+  const unstatedWords = (/** @type {Remark} */ item, /** @type {Named} */ named) => UNSTATED[item.code](item.params, named);
+  const excludedWords = (/** @type {Remark} */ item, /** @type {Named} */ named) => EXCLUDED[item.code](item.params, named);
+
+  ew.strings = Object.freeze({
+    reason, blocker, rowName, rankWords, liftWords, capWords, noteWords, unstatedWords, excludedWords, hintWords, capital, listed,
+  });
+})((globalThis.etchwright = globalThis.etchwright || {}));
