@@ -1,8 +1,8 @@
 """
 How often the next run falls in its 90 % interval, by number of runs: `python -m bench.coverage [--full]`.
 
-With --full every bin of the first table holds at least 20,000 next runs (about ten minutes); without, about
-2,500. The seed is fixed: the same table each time.
+With --full every bin of the first table holds at least 20,000 next runs and takes about twenty minutes;
+without, about 2,500. The seed is fixed: the same table each time.
 """
 
 from __future__ import annotations

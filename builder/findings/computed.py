@@ -56,6 +56,12 @@ class Computed:
         """Return the evidence of a film in a recipe."""
         return self.by_recipe[etch_id].get(film, NOTHING)
 
+    def evidence(self, etching: Etching, film: str) -> Evidence:
+        """Return the evidence of a film in a recipe, or in an etchant by published facts alone."""
+        if etching.recipe is not None:
+            return self.known(etching.recipe.id, film)
+        return self.by_etchant.get(etching.etchant.id, {}).get(film, NOTHING)
+
     @cached_property
     def by_recipe(self) -> Mapping[str, Mapping[str, Evidence]]:
         """Evidence of films in each recipe."""

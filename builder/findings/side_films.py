@@ -2,9 +2,11 @@
 
 from __future__ import annotations
 
+from dataclasses import dataclass
+
 from builder.engine import UNKNOWN_SCHEDULE, Cut, Rank, Schedule, Span, open_by_look, open_by_timer
 from builder.findings.computed import Computed
-from builder.findings.plan.evidence import Etching
+from builder.findings.plan.evidence import Etching, Evidence
 from builder.findings.plan.exposures import Case, Reaching, Timing
 from builder.findings.plan.facts import PlanFacts
 from builder.findings.plan.judging import PlanCaps, judge
@@ -18,6 +20,17 @@ SIDE_FILM_NM = 1000.0
 """Thickness that pages take for a film that nobody has described."""
 
 _NO_WAY = Span(None, None, None)
+
+
+@dataclass(frozen=True, slots=True)
+class _OneFilm(Reaching):
+    """A reach in which only one film is asked for, and its evidence is known already."""
+
+    known: Evidence
+
+    def evidence(self, film: str) -> Evidence:
+        """Evidence of the film."""
+        return self.known
 
 
 def row_at_latest_stop(
@@ -57,7 +70,8 @@ def _row(
 ) -> FilmRow:
     goal = PlanFilm(target, timing.cut.thickness_nm, Role.TARGET, timing.cut.tolerance)
     stage = Stage(PlanSample("", (goal,)), goal, (), ())
-    reach = Reaching(facts, etching, computed.asked, stage, timing)
+    known = computed.evidence(etching, film)
+    reach = _OneFilm(facts, etching, computed.asked, stage, timing, known)
     side = PlanFilm(film, SIDE_FILM_NM, role, computed.facts.defaults.tolerance)
     case = Case(
         side, role, open_by_timer(timing.schedule), open_by_look(timing.schedule, timing.cut),

@@ -4,9 +4,11 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
+from builder.findings.computed import Computed
 from builder.records.etchants import Etchant
 from builder.records.lab import LabRecords
 from builder.views.link import Link, PageKind, page_url
+from builder.views.own_rate_rows import OwnRateRow, own_rate_rows
 from builder.views.published_rows import (
     HintRow,
     RateRow,
@@ -48,12 +50,13 @@ class EtchantPage:
     note: str | None
     citations: tuple[Citation, ...]
     recipes: tuple[RecipeRow, ...]
+    own_rates: tuple[OwnRateRow, ...]
     rates: tuple[RateRow, ...]
     statements: tuple[StatementRow, ...]
     hints: tuple[HintRow, ...]
 
 
-def etchant_page(records: LabRecords, etchant: Etchant) -> EtchantPage:
+def etchant_page(records: LabRecords, computed: Computed, etchant: Etchant) -> EtchantPage:
     """Return the view of one etchant."""
     mixture = etchant.mixture
     rates = sorted(records.rates.get(etchant.id, ()), key=lambda rate: (rate.film, rate.pointer))
@@ -74,6 +77,7 @@ def etchant_page(records: LabRecords, etchant: Etchant) -> EtchantPage:
         note=etchant.note,
         citations=citations(records, sources, etchant.trust or (mixture.trust if mixture else None)),
         recipes=recipe_rows(records, recipes),
+        own_rates=own_rate_rows(records, computed, recipes),
         rates=rate_rows(records, rates),
         statements=statement_rows(records, records.statements.get(etchant.id, ())),
         hints=hint_rows(records, records.hints.get(etchant.id, ())),

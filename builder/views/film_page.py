@@ -4,12 +4,15 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
+from builder.findings.computed import Computed
 from builder.records.films import Film
 from builder.records.lab import LabRecords
+from builder.views.film_answers import EtchedBy, etched_by
+from builder.views.film_harms import Harms, harms
 from builder.views.link import Link, PageKind, page_url
+from builder.views.matrix_selectivity import target_url
 from builder.views.number_text import as_recorded, as_written
 from builder.views.published_rows import RateRow, StatementRow, rate_rows, statement_rows
-from builder.views.recipe_rows import RecipeRow, recipe_rows
 from builder.views.references import Citation, Fact, FilmRef, citations, film_link, film_ref
 from builder.views.words import BARRIER_WORDS, FAMILY_NAMES
 
@@ -30,15 +33,16 @@ class FilmPage:
     pending: tuple[str, ...]
     note: str | None
     citations: tuple[Citation, ...]
-    removed_by: tuple[RecipeRow, ...]
+    etched_by: tuple[EtchedBy, ...]
+    harms: Harms
+    selectivity: Link | None
     mask_in: tuple[Link, ...]
     rates: tuple[RateRow, ...]
     statements: tuple[StatementRow, ...]
 
 
-def film_page(records: LabRecords, film: Film) -> FilmPage:
+def film_page(records: LabRecords, computed: Computed, film: Film) -> FilmPage:
     """Return the view of one film."""
-    removed_by = [etch for etch in records.etches.values() if film.id in etch.targets]
     rates = [rate for group in records.rates.values() for rate in group if rate.film == film.id]
     statements = [one for group in records.statements.values() for one in group if one.film == film.id]
     return FilmPage(
@@ -54,11 +58,20 @@ def film_page(records: LabRecords, film: Film) -> FilmPage:
         pending=film.pending,
         note=film.note,
         citations=citations(records, (film.source,) if film.source else (), film.trust),
-        removed_by=recipe_rows(records, removed_by),
+        etched_by=etched_by(records, computed, film.id),
+        harms=harms(records, computed, film.id),
+        selectivity=_selectivity(records, film),
         mask_in=_mask_in(records, film),
         rates=rate_rows(records, sorted(rates, key=lambda rate: (rate.etchant, rate.pointer))),
         statements=statement_rows(records, sorted(statements, key=lambda one: (one.etchant, one.pointer))),
     )
+
+
+def _selectivity(records: LabRecords, film: Film) -> Link | None:
+    """A film that a recipe removes has a page of selectivities."""
+    if not any(film.id in etch.targets for etch in records.etches.values()):
+        return None
+    return Link("Its selectivity to every other film", target_url(film.id))
 
 
 def _facts(records: LabRecords, film: Film) -> tuple[Fact, ...]:

@@ -6,8 +6,10 @@ from collections import Counter
 from dataclasses import asdict, dataclass
 from datetime import date
 
+from builder.findings.computed import Computed
 from builder.records.lab import LabRecords
 from builder.records.terms import Status
+from builder.views.changes import ChangeRow, changed_rows, doubtful_rows
 from builder.views.link import PageKind, page_url
 from builder.views.number_text import in_words
 from builder.views.recipe_rows import NO_RUN, RecipeRow, recipe_rows
@@ -49,6 +51,8 @@ class HomePage:
     removable: tuple[FilmChoices, ...]
     latest: tuple[RecipeRow, ...]
     stale: tuple[RecipeRow, ...]
+    changed: tuple[ChangeRow, ...]
+    doubtful: tuple[ChangeRow, ...]
     recipe_count: int
     film_count: int
     run_count: int
@@ -59,8 +63,9 @@ class HomePage:
         return [asdict(name) for name in self.names]
 
 
-def home_page(records: LabRecords, today: date) -> HomePage:
+def home_page(records: LabRecords, computed: Computed) -> HomePage:
     """Return the view of the home page; a recipe is stale by the lab's own limit of age."""
+    today = computed.today
     rows = recipe_rows(records, records.etches.values())
     ran = sorted((row for row in rows if row.last_run != NO_RUN), key=lambda row: row.last_run, reverse=True)
     oldest = today.toordinal() - records.settings.stale_after_days
@@ -74,6 +79,8 @@ def home_page(records: LabRecords, today: date) -> HomePage:
         removable=_removable(records),
         latest=tuple(ran[:_LATEST]),
         stale=tuple(stale[:_LATEST]),
+        changed=changed_rows(records, computed)[:_LATEST],
+        doubtful=doubtful_rows(records, computed),
         recipe_count=len(rows),
         film_count=len(records.films),
         run_count=sum(row.run_count for row in rows),

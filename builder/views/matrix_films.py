@@ -20,7 +20,6 @@ from builder.views.matrix_grid import (
     GridCell,
     MatrixView,
     Pool,
-    columns_of,
     film_order,
     filters_of,
     grid_row,
@@ -29,9 +28,9 @@ from builder.views.matrix_grid import (
     rank_css,
     source_places,
 )
-from builder.views.number_text import NO_BREAK, UNKNOWN, length_text
+from builder.views.number_text import NO_BREAK, length_text
 from builder.views.plan_words import RANK_WORDS, reason
-from builder.views.recipe_answers import band_text, depth_text
+from builder.views.recipe_answers import depth_text
 from builder.views.recipe_films import loss_text
 
 URL = "matrices/films.html"
@@ -51,9 +50,10 @@ _RANKS = (
 )
 
 
-def films_matrix(records: LabRecords, computed: Computed, targets: Sequence[Link]) -> MatrixView:
+def films_matrix(
+    records: LabRecords, computed: Computed, columns: Sequence[Column], targets: Sequence[Link]
+) -> MatrixView:
     """Return the matrix of all films with anything on record; `targets` lead to the selectivities."""
-    columns = columns_of(records, computed)
     films = film_order(records, {film for column in columns for film in column.evidence})
     pool, data, rows = Pool(), [], []
     for film in films:
@@ -129,7 +129,7 @@ def _line(
             continue
         found = list(_rows(computed, column, film))
         cells.append(_cell(column, film, found[_CHOSEN], known))
-        line[str(place)] = _cell_data(records, pool, found, known)
+        line[str(place)] = _cell_data(records, pool, found, known, column.rates[film])
     return cells, line
 
 
@@ -156,16 +156,17 @@ def _target(column: Column, film: str) -> str:
     return " ew-grid-target" if recipe is not None and film in recipe.targets else ""
 
 
-def _cell_data(records: LabRecords, pool: Pool, found: Sequence[FilmRow], known: Evidence) -> list[object]:
+def _cell_data(
+    records: LabRecords, pool: Pool, found: Sequence[FilmRow], known: Evidence, rate: str
+) -> list[object]:
     """Verdicts, short texts, losses, reasons (one a time each), then rate, rank, statements, sources."""
-    rate = band_text(known.band)
     said = "; ".join(dict.fromkeys(word for word in known.words if word))
     return [
         "".join(_LETTERS[row.verdict] for row in found),
         [pool.place(short_loss(row)) for row in found],
         [pool.place(loss_text(row).full) for row in found],
         [pool.place(reason(row)) for row in found],
-        pool.place(rate.full if rate.value != UNKNOWN else ""),
+        pool.place(rate),
         pool.place(_rank_words(known)),
         pool.place(said),
         source_places(records, pool, known.sources),

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass, field
 
 from builder.engine import Rank
@@ -11,6 +11,7 @@ from builder.findings.plan.evidence import Etching, Evidence
 from builder.records.lab import LabRecords
 from builder.records.terms import FilmFamily, Method, Status
 from builder.views.link import Link, PageKind, page_url
+from builder.views.recipe_answers import band_text
 from builder.views.references import FilmRef, film_ref, source_link
 from builder.views.words import FAMILY_NAMES, METHOD_NAMES
 
@@ -21,7 +22,11 @@ PUBLISHED_COLUMN = "published"
 
 @dataclass(frozen=True)
 class Column:
-    """One etch: a recipe of the lab, or an etchant by published facts alone (`kind`)."""
+    """
+    One etch: a recipe of the lab, or an etchant by published facts alone (`kind`).
+
+    `evidence` and `rates` (as they are shown; empty without a number) are by film.
+    """
 
     id: str
     kind: str
@@ -29,7 +34,8 @@ class Column:
     method_id: str
     etchant_id: str
     etching: Etching
-    evidence: dict[str, Evidence]
+    evidence: Mapping[str, Evidence]
+    rates: Mapping[str, str]
 
 
 @dataclass(frozen=True)
@@ -133,7 +139,8 @@ def columns_of(records: LabRecords, computed: Computed) -> tuple[Column, ...]:
             method_id=etch.method,
             etchant_id=etch.etchant,
             etching=computed.etching(etch.id),
-            evidence=dict(computed.by_recipe[etch.id]),
+            evidence=computed.by_recipe[etch.id],
+            rates=_rates(computed.by_recipe[etch.id]),
         )
         for etch in records.etches.values()
         if etch.status is not Status.RETIRED
@@ -146,11 +153,18 @@ def columns_of(records: LabRecords, computed: Computed) -> tuple[Column, ...]:
             method_id=records.etchants[etchant_id].method,
             etchant_id=etchant_id,
             etching=computed.etchant_alone(etchant_id),
-            evidence=dict(films),
+            evidence=films,
+            rates=_rates(films),
         )
         for etchant_id, films in computed.by_etchant.items()
     ]
     return in_order([*recipes, *published])
+
+
+def _rates(evidence: Mapping[str, Evidence]) -> dict[str, str]:
+    return {
+        film: "" if known.band is None else band_text(known.band).full for film, known in evidence.items()
+    }
 
 
 def in_order(columns: Iterable[Column]) -> tuple[Column, ...]:

@@ -17,7 +17,6 @@ from builder.views.matrix_grid import (
     GridCell,
     MatrixView,
     Pool,
-    columns_of,
     film_order,
     filters_of,
     grid_row,
@@ -26,9 +25,8 @@ from builder.views.matrix_grid import (
     rank_css,
     source_places,
 )
-from builder.views.number_text import NO_BREAK, ratio_text
+from builder.views.number_text import NO_BREAK, NumberText, ratio_text
 from builder.views.plan_words import RANK_WORDS
-from builder.views.recipe_answers import band_text
 from builder.views.references import FilmRef, film_ref
 from builder.views.words import FAMILY_NAMES
 
@@ -74,9 +72,10 @@ class SelectivityIndex:
     films_matrix: Link
 
 
-def selectivity_pages(records: LabRecords, computed: Computed) -> tuple[MatrixView, ...]:
+def selectivity_pages(
+    records: LabRecords, computed: Computed, columns: Sequence[Column]
+) -> tuple[MatrixView, ...]:
     """Return one matrix a film that a recipe removes."""
-    columns = columns_of(records, computed)
     targets = {
         film for recipe in computed.facts.etches.values() for film in recipe.targets if film in records.films
     }
@@ -134,7 +133,7 @@ def _page(
         if not any(found):
             continue
         films.append(film)
-        rows.append(grid_row(records, film, [None if one is None else _cell(one) for one in found]))
+        rows.append(grid_row(records, film, [_cell(one) for one in found]))
         data.append({
             str(place): _cell_data(records, pool, one, column, target, film)
             for place, (one, column) in enumerate(zip(found, columns, strict=True))
@@ -149,9 +148,9 @@ def _page(
         description=f"How much faster {name} goes than other films, etch by etch.",
         search_text=f"selectivity {target} {' '.join(records.films[target].synonyms)}",
         lead=f"Rate of {name} over rate of the film in the row, for the next run.",
-        note="Where wafers carried both films the ratio is taken wafer by wafer, so that what bath or chamber "
-        "did to both drops out; else the ends of the two rates are set against each other, worst against "
-        "worst. The number shown is the likely one; with no loss seen, the lower end.",
+        note="Where wafers carried both films the ratio is taken wafer by wafer, so that what bath or "
+        "chamber did to both drops out; else the ends of the two rates are set against each other, worst "
+        "against worst. The number shown is the likely one; with no loss seen, the lower end.",
         legend=_LEGEND,
         times=(),
         chosen="",
@@ -173,9 +172,8 @@ def _found(computed: Computed, column: Column, target: str, film: str) -> FoundS
     return rate_selectivity(column.evidence[target], other)
 
 
-def short_ratio(found: FoundSelectivity) -> str:
-    """Return a selectivity as a cell shows it: the likely value, else the end that is known."""
-    text = ratio_text(found.lo, found.mid, found.hi)
+def _short(text: NumberText) -> str:
+    """A selectivity as a cell shows it: the likely value, else the end that is known."""
     value = text.value
     for words, sign in (("at least ", "≥"), ("at most ", "≤")):
         if value.startswith(words):
@@ -183,8 +181,12 @@ def short_ratio(found: FoundSelectivity) -> str:
     return value
 
 
-def _cell(found: FoundSelectivity) -> GridCell:
-    return GridCell(rank_css(found.rank), "", short_ratio(found))
+def _cell(found: FoundSelectivity | None) -> GridCell | None:
+    return None if found is None else GridCell(rank_css(found.rank), "", _short(_text(found)))
+
+
+def _text(found: FoundSelectivity) -> NumberText:
+    return ratio_text(found.lo, found.mid, found.hi)
 
 
 def _cell_data(
@@ -192,13 +194,13 @@ def _cell_data(
 ) -> list[object]:
     """Short text, ratio with interval, how it was taken, rank, the two rates, sources."""
     one, other = column.evidence[target], column.evidence[film]
-    rates = (one, other)
+    text = _text(found)
     return [
-        pool.place(short_ratio(found)),
-        pool.place(ratio_text(found.lo, found.mid, found.hi).full),
+        pool.place(_short(text)),
+        pool.place(text.full),
         pool.place(_basis(found)),
         pool.place(RANK_WORDS[found.rank]),
-        [pool.place(band_text(known.band).full) for known in rates],
+        [pool.place(column.rates[one]) for one in (target, film)],
         source_places(records, pool, dict.fromkeys((*one.sources, *other.sources))),
     ]
 

@@ -9,6 +9,7 @@ from builder.findings.plan.facts import PlanFacts
 from builder.findings.plan.gather import LEVELS
 from builder.findings.plan.stored import plain
 from builder.records.lab import LabRecords
+from builder.records.terms import Origin
 from builder.records.unit_table import unit_table_json
 from builder.views.run_card import run_cards
 
@@ -33,13 +34,13 @@ def planner_data(records: LabRecords, facts: PlanFacts, reference: PlanFacts) ->
     """
     Return all that the planner in the browser knows, as JSON-like data.
 
-    `reference` are the facts with nothing of the lab's own; of its etchants only those that differ are
-    stored.
+    `reference` are the facts with nothing of the lab's own, for an etchant alone; of its etchants only
+    those that differ are stored.
     """
     return {
         "format": FORMAT,
         "facts": plain(facts),
-        "reference": _reference(facts, reference),
+        "reference": _reference(records, facts, reference),
         "rules": {name.lower(): plain(getattr(plan_rules, name)) for name in RULE_NAMES},
         "quantiles": quantiles(facts),
         "units": json.loads(unit_table_json()),
@@ -57,7 +58,8 @@ def quantiles(facts: PlanFacts) -> list[dict[str, float]]:
     return [{"confidence": level, "quantile": normal((1 + level) / 2)} for level in sorted(levels)]
 
 
-def _reference(facts: PlanFacts, reference: PlanFacts) -> dict[str, object]:
+def _reference(records: LabRecords, facts: PlanFacts, reference: PlanFacts) -> dict[str, object]:
+    couples = zip(sorted(records.couples.items()), facts.couples, strict=True)
     return {
         "etchants": {
             id: plain(etchant)
@@ -66,5 +68,5 @@ def _reference(facts: PlanFacts, reference: PlanFacts) -> dict[str, object]:
         },
         "etches": {},
         "refused": {},
-        "couples": plain(reference.couples),
+        "couples": [plain(fact) for (_, couple), fact in couples if couple.origin is Origin.REFERENCE],
     }

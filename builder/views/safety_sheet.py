@@ -62,7 +62,7 @@ def bench_sheet(records: LabRecords, chemical: Chemical) -> BenchSheet:
             if row.verdict in ("usable", "limited")
         ),
         does_not_hold=tuple(row.material for row in tables.containers if row.verdict == "not-usable"),
-        limits=tuple(f"{row.value} {row.body} ({row.kind}; {row.as_of})" for row in tables.limits),
+        limits=tuple(f"{row.value} {row.code} ({row.body}, {row.as_of})" for row in tables.limits),
         limits_missing="pending: read the SDS" if tables.limits_pending else "none on record: read the SDS",
     )
 

@@ -40,6 +40,7 @@ class ExposureRow:
     """One exposure limit, value as printed: whose, of which kind, as of when."""
 
     body: str
+    code: str
     kind: str
     value: str
     as_of: str
@@ -118,6 +119,7 @@ def _limit(records: LabRecords, limit: ExposureLimit, part: str) -> ExposureRow:
     source = None if limit.source is None else records.sources[limit.source]
     return ExposureRow(
         body=f"{part}: {limit.body}" if part else limit.body,
+        code=limit.kind.value,
         kind=f"{limit.kind.value}, {EXPOSURE_WORDS[limit.kind]}",
         value=f"{as_recorded(limit.value)} {limit.unit}",
         as_of=str(source.year) if source is not None and source.year is not None else "year not stated",

@@ -166,6 +166,14 @@ def test_undercut_of_the_textbook_form() -> None:
     assert [found.low, found.mid, found.high] == pytest.approx([100, 100, 100], rel=1e-12)
 
 
+def test_undercut_stands_still_during_induction() -> None:
+    """By hand: stop at 512 s, of which 12 s are induction; half of 1 nm/s for 500 s is 250 nm, not 256."""
+    exact = RateBand(1.0, 1.0, 1.0)
+    cut = Cut(500, 500, 0.0, 0.0, 12, 0.0, 0, through=True)
+    found = undercut(Span(0.5, 0.5, 0.5), exact, schedule(exact, cut), cut)
+    assert [found.low, found.mid, found.high] == pytest.approx([250, 250, 250], rel=1e-12)
+
+
 @pytest.mark.parametrize(
     ("thickness", "under", "other", "mask", "resist"),
     [

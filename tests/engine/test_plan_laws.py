@@ -314,7 +314,8 @@ def test_a_thinner_or_porous_upper_film_bares_the_next_one_longer(
     )
     assert thick.high_s <= thin.high_s <= porous.high_s == exposure.high_s
     assert thick.low_s <= thin.low_s <= exposure.low_s
-    assert below(exposure, None, thickness, cut, porous=False).high_s == exposure.high_s
+    # Nothing known of the upper film: at worst the next one is bare at once, at best never; no likely value.
+    assert below(exposure, None, thickness, cut, porous=False) == Exposure(0.0, None, exposure.high_s)
 
 
 @given(st.lists(st.sampled_from(Verdict), max_size=6), st.sampled_from(Verdict))

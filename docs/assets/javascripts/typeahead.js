@@ -188,6 +188,9 @@
     });
   }
 
+  // The planner's form has fields of the same kind.
+  (globalThis.etchwright = globalThis.etchwright || {}).find = Object.freeze({ combobox: combobox });
+
   const data = document.getElementById("ew-names");
   if (data) ask(JSON.parse(data.textContent || "[]"));
 })();

@@ -34,7 +34,7 @@
     const reference = Object.assign({}, given.facts, given.reference, {
       etchants: Object.assign({}, given.facts.etchants, given.reference.etchants),
     });
-    return { facts: facts, reference: prepared(reference, given), cards: given.cards, samples: given.samples, sources: given.sources, lab: given.lab, tools: given.tools };
+    return { facts: facts, reference: prepared(reference, given), cards: given.cards, samples: given.samples, sources: given.sources, lab: given.lab };
   }
 
   /** @param {any} plain @param {any} given @returns {Facts} */
@@ -49,7 +49,7 @@
       etchings: Object.values(etches).map((recipe) => ({ etchant: etchants[recipe.etchant], recipe: recipe, known: new Map() })),
       alone: new Map(),
       bondPattern: plain.bond_words ? new RegExp(plain.bond_words, "i") : null,
-      rules: given.rules, quantiles: given.quantiles, units: ew.units.tableOf(given.units),
+      tools: new Map(Object.entries(given.tools)), rules: given.rules, quantiles: given.quantiles, units: ew.units.tableOf(given.units),
     });
   }
 

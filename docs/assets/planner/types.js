@@ -25,8 +25,8 @@
  * @typedef {Map<string, UnitsOf>} UnitTable
  * @typedef {{text: string, unit: string, form: string, value: number | null, halfWidth: number | null, low: number | null, high: number | null}} Quantity
  * @typedef {{etchant: EtchantFacts, recipe: EtchFacts | null, known: Map<string, Map<string, Evidence>>}} Etching `known` keeps the evidence found so far, by what was asked and film
- * @typedef {{format: number, as_of: string, defaults: Defaults, films: {[id: string]: FilmFacts}, etchants: {[id: string]: EtchantFacts}, etches: {[id: string]: EtchFacts}, refused: {[tool: string]: {[film: string]: string}}, couples: CoupleFact[], meetings: MeetingFact[], bondPattern: RegExp | null, families: FilmFacts[], etchings: Etching[], alone: Map<string, Etching>, rules: Rules, quantiles: {confidence: number, quantile: number}[], units: UnitTable}} Facts
- * @typedef {{facts: Facts, reference: Facts, cards: {[recipe: string]: any}, samples: any[], sources: {[id: string]: string}, lab: string, tools: {[id: string]: string}}} PlannerData
+ * @typedef {{format: number, as_of: string, defaults: Defaults, films: {[id: string]: FilmFacts}, etchants: {[id: string]: EtchantFacts}, etches: {[id: string]: EtchFacts}, refused: {[tool: string]: {[film: string]: string}}, couples: CoupleFact[], meetings: MeetingFact[], bondPattern: RegExp | null, families: FilmFacts[], etchings: Etching[], alone: Map<string, Etching>, tools: Map<string, string>, rules: Rules, quantiles: {confidence: number, quantile: number}[], units: UnitTable}} Facts
+ * @typedef {{facts: Facts, reference: Facts, cards: {[recipe: string]: any}, samples: any[], sources: {[id: string]: string}, lab: string}} PlannerData
  *
  * @typedef {{confidence: number, temperature: Range | null, key: string}} Asked `key` names the question
  * @typedef {{rank: string, band: Band | null, limitS: number | null, attacked: boolean, adverse: string[], conflict: boolean, single: boolean, far: boolean, allTemperatures: boolean, hint: string | null, sources: string[], words: string[]}} Evidence

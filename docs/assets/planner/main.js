@@ -1,0 +1,38 @@
+// @ts-check
+/* Wires data, state, address bar and page together. */
+(function (ew) {
+  "use strict";
+
+  const PAUSE_MS = 150;
+  if (!document.querySelector(ew.hooks.root)) return;
+  const data = ew.data.read(/** @type {any} */ (window).etchwrightFacts);
+  const lab = data.facts.defaults.confidence;
+  let state = ew.state.initial(lab);
+  const show = ew.view.page(data, send);
+  let written = "";
+  let timer = 0;
+
+  function send(/** @type {any} */ action) {
+    state = ew.state.after(state, action);
+    clearTimeout(timer);
+    // Browsers count how often the address changes; once typing pauses is enough.
+    timer = window.setTimeout(write, PAUSE_MS);
+    show(state, action.focus);
+  }
+
+  function write() {
+    if (!location.hash && !state.file.layers.length) return;
+    written = ew.address.encode(state.file, state.confidence === lab ? null : state.confidence, state.etchant);
+    history.replaceState(null, "", written);
+  }
+
+  function restore() {
+    if (location.hash === written) return;
+    const found = ew.address.decode(location.hash, data.facts);
+    send({ type: "load", value: found.file || ew.sampleFile.empty(), confidence: found.confidence || lab, etchant: found.etchant, notices: found.notices });
+  }
+
+  ew.viewBar.wire(data, () => state, send);
+  window.addEventListener("hashchange", restore);
+  restore();
+})((globalThis.etchwright = globalThis.etchwright || {}));
