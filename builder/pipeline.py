@@ -31,7 +31,7 @@ class Prepared:
 def prepare(lab_dir: Path, as_of: datetime.date | None, progress: Progress) -> Prepared:
     """Read, check, compute and view a lab; nothing is written. `as_of` None means the lab's own day."""
     progress("reading and checking records")
-    records, problems = check_lab(lab_dir)
+    records, problems = check_lab(lab_dir, as_of)
     if records is None or has_errors(problems):
         return Prepared(None, tuple(problems))
     progress("computing")

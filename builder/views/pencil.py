@@ -44,7 +44,7 @@ class Pencil:
 
     def quoted(self, number: float) -> Value:
         """Return a number that is read from somewhere, to the pencil's digits."""
-        return _printed(plain_number(number, self.digits))
+        return _printed(self._text(number))
 
     def log(self, number: float) -> Value:
         """Return a logarithm, to a fixed place: its digits after the point are those of the rate."""
@@ -52,11 +52,17 @@ class Pencil:
 
     def work(self, sum_: str) -> Value:
         """Return the result of a sum of printed numbers, to the pencil's digits."""
-        return _printed(plain_number(worked_out(sum_), self.digits), sum_)
+        return _printed(self._text(worked_out(sum_)), sum_)
 
     def work_log(self, sum_: str) -> Value:
         """Return the result of a sum that is a logarithm."""
         return _printed(fixed_text(worked_out(sum_), self.digits), sum_)
+
+    def _text(self, number: float) -> str:
+        # Never coarser than units: a rounded ten looks as if it were known to the unit.
+        return (
+            fixed_text(number, 0) if abs(number) >= 10.0**self.digits else plain_number(number, self.digits)
+        )
 
     def work_exactly(self, sum_: str, places: int) -> Value:
         """Return the result of a sum to a fixed place."""

@@ -138,12 +138,21 @@ def listed(names: Sequence[str]) -> str:
     return names[0] if len(names) == 1 else f"{', '.join(names[:-1])} and {names[-1]}"
 
 
+_OF_A_MEMBER: dict[Ground, str] = {
+    Ground.MILD_END_EXCEEDS: "even the mild end takes more of one than is allowed",
+    Ground.STRADDLES: "one may lose more than is allowed",
+    Ground.WITHIN_ALLOWED: "each loses no more than is allowed",
+}
+
+
 def _ground(row: FilmRow) -> str:
     if row.ground is Ground.NO_ALLOWANCE and row.spent_nm is None:
         return "how much of it may still go is not known"
     if row.ground in _GROUNDS:
         return _GROUNDS[row.ground]
-    assert row.loss.low is not None
+    if row.loss.low is None:
+        # A family with a member that nobody measured has no loss as a whole, but a member's word stands.
+        return f"of the films it may be, {_OF_A_MEMBER[row.ground]}"
     if row.allowed_nm is None or math.isinf(row.allowed_nm):
         allowed = ""
     else:

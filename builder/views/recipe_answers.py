@@ -11,36 +11,30 @@ from builder.engine import (
     RateBand,
     Span,
     end_mode,
-    least_mask,
     loss,
-    mask_loss_by_selectivity,
     open_by_timer,
 )
 from builder.engine.plan_rules import ISOTROPIC_UNDERCUT
 from builder.findings.computed import Computed
 from builder.findings.plan.judging import scaled, without_offset
 from builder.findings.recipe_times import TargetTiming, target_timings
-from builder.findings.selectivities import recipe_selectivity
 from builder.records.lab import LabRecords
-from builder.records.terms import FilmFamily, Method
+from builder.records.terms import Method
 from builder.views.number_text import (
     NO_BREAK,
-    UNKNOWN,
     NumberText,
     Rounding,
-    as_written,
     length_text,
     number_text,
     rate_text,
-    ratio_text,
     share_text,
     time_text,
 )
 from builder.views.plan_words import RANK_WORDS
+from builder.views.recipe_masks import MaskAnswer, mask_answers, no_mask_words
 from builder.views.recipe_standing import runs_text
 from builder.views.references import FilmRef, film_ref
 
-_ORGANIC = (FilmFamily.RESIST, FilmFamily.POLYMER)
 MODE_WORDS = {
     Mode.RUN_TO_TIME: "Run to time.",
     Mode.LOOK_AND_FINISH: "Look and finish: run to the first look, rinse, look or measure, finish.",
@@ -79,24 +73,6 @@ class TimeAnswer:
 
 
 @dataclass(frozen=True)
-class MaskAnswer:
-    """
-    How much of one mask the usual depth needs at least, reserve included; "unknown" where nobody measured.
-
-    `needed` is for an etch that is stopped on clearing where wafers carried both films, else for the
-    latest stop; `to_latest` is for the latest stop where that is another number. `held` is how long it
-    was seen to stay on.
-    """
-
-    mask: FilmRef
-    needed: str
-    basis: str
-    to_latest: str
-    held: str
-    rank: str
-
-
-@dataclass(frozen=True)
 class SidewaysAnswer:
     """The way of one mask edge for the usual depth, and the ratio to the depth."""
 
@@ -123,7 +99,7 @@ def recipe_answers(records: LabRecords, computed: Computed, etch_id: str) -> Rec
     """Return the four answers of a recipe."""
     timings = target_timings(computed, etch_id)
     first = timings[0]
-    masks = tuple(_masks(records, computed, etch_id, first))
+    masks = tuple(mask_answers(records, computed, etch_id, first))
     return RecipeAnswers(
         depth=depth_text(first.usual_nm),
         rate=_rate(records, computed, etch_id, first),
@@ -133,7 +109,7 @@ def recipe_answers(records: LabRecords, computed: Computed, etch_id: str) -> Rec
         ),
         time=_time(computed, etch_id, first),
         masks=masks,
-        no_mask="" if masks else _no_mask(records, etch_id),
+        no_mask="" if masks else no_mask_words(records, etch_id),
         sideways=_sideways(computed, etch_id, first),
         data=time_data(records, timings),
     )
@@ -221,67 +197,6 @@ def _why(timing: TargetTiming) -> str:
 def _seconds(time_s: float) -> str:
     sign = "\u2212" if time_s < 0 else ""
     return f"{sign}{time_text(abs(time_s))}"
-
-
-def _masks(
-    records: LabRecords, computed: Computed, etch_id: str, timing: TargetTiming
-) -> Iterable[MaskAnswer]:
-    for mask in dict.fromkeys(mask.film for mask in records.etches[etch_id].masks):
-        yield _mask(records, computed, etch_id, timing, mask)
-
-
-def _mask(
-    records: LabRecords, computed: Computed, etch_id: str, timing: TargetTiming, mask: str
-) -> MaskAnswer:
-    known = computed.known(etch_id, mask)
-    by_timer = _loss_to_latest(known.band, timing)
-    found = recipe_selectivity(computed, etch_id, timing.film, mask)
-    latest = _needed(records, computed, etch_id, mask, by_timer)
-    ref, held = film_ref(records, mask), _held(records, etch_id, mask)
-    if found is None or not found.pairs or found.lo is None:
-        basis = "left in until the latest stop" if by_timer is not None else "its loss is not on record"
-        return MaskAnswer(ref, latest, basis, "", held, RANK_WORDS[known.rank])
-    lost = mask_loss_by_selectivity(timing.cut(timing.usual_nm), found.lo)
-    ratio = ratio_text(found.lo, found.mid, found.hi)
-    needed = _needed(records, computed, etch_id, mask, lost)
-    return MaskAnswer(
-        mask=ref,
-        needed=needed,
-        basis=f"stopped on clearing; selectivity {ratio.full}, from {_pairs(found.pairs)}",
-        to_latest="" if latest == needed else latest,
-        held=held,
-        rank=RANK_WORDS[found.rank],
-    )
-
-
-def _held(records: LabRecords, etch_id: str, mask: str) -> str:
-    times = [one.longest_time_held for one in records.etches[etch_id].masks if one.film == mask]
-    longest = max(times, key=lambda time: time.number)
-    return as_written(longest.text)
-
-
-def _pairs(count: int) -> str:
-    return f"{count}{NO_BREAK}wafer{'s that carried both' if count != 1 else ' that carried both'}"
-
-
-def _loss_to_latest(band: RateBand | None, timing: TargetTiming) -> float | None:
-    plan = timing.times(timing.usual_nm)
-    return loss(band, open_by_timer(plan), timing.phi).high
-
-
-def _needed(records: LabRecords, computed: Computed, etch_id: str, mask: str, lost: float | None) -> str:
-    if lost is None:
-        return UNKNOWN
-    in_plasma = records.etches[etch_id].method in (Method.PLASMA, Method.CYCLIC)
-    organic = records.films[mask].family in _ORGANIC
-    needed = least_mask(lost, computed.facts.defaults.allowance, resist_in_plasma=organic and in_plasma)
-    return length_text(None, None, needed).with_unit.removeprefix("at most ")
-
-
-def _no_mask(records: LabRecords, etch_id: str) -> str:
-    if records.etches[etch_id].method is Method.LIFT_OFF:
-        return "Lift-off needs none: what lies on the resist goes with it."
-    return "No mask is on record: whether one stays on is not known here."
 
 
 def _sideways(computed: Computed, etch_id: str, timing: TargetTiming) -> SidewaysAnswer:

@@ -17,6 +17,7 @@ from builder.views.worked_interval import Ends, WorkedStep, interval_steps, show
 _FEWEST, _MOST = 4, 9
 _SECONDS_A_MINUTE = 60.0
 _CHECKED_DIGITS = 3
+_RECORDED_DIGITS = 6
 
 
 @dataclass(frozen=True)
@@ -69,7 +70,7 @@ def _agree(own: OwnRate, timing: TargetTiming, ends: Ends, times: list[tuple[Wor
 
 def _time_steps(pencil: Pencil, timing: TargetTiming, ends: Ends) -> Iterator[tuple[WorkedStep, Value]]:
     depth, phi = pencil.given(timing.usual_nm), pencil.given(timing.phi)
-    delta, offset = pencil.given(timing.tolerance), pencil.given(timing.offset_s)
+    delta, offset = pencil.given(timing.tolerance), _offset(pencil, timing.offset_s)
     words = f"{depth_text(timing.usual_nm)} of film"
     thin = f"{depth.text} × (1 − {delta.text}) ÷ ({ends.high.text} × (1 + {phi.text})) × 60"
     thin += _plus(timing, offset)
@@ -77,7 +78,7 @@ def _time_steps(pencil: Pencil, timing: TargetTiming, ends: Ends) -> Iterator[tu
     yield shown(
         f"First look for {words}: 0.8 of the time in which the thinnest place "
         f"({share_text(timing.tolerance)} thinner) is gone where the etch is fastest "
-        f"({share_text(timing.phi)} faster than the high end). The timer shows "
+        f"({share_text(timing.phi)} faster than the high end){_offset_words(timing, offset)}. The timer shows "
         f"{time_text(max(0.0, first.number), Rounding.DOWN)}.",
         first, "s",
     ), first  # fmt: skip
@@ -90,6 +91,16 @@ def _time_steps(pencil: Pencil, timing: TargetTiming, ends: Ends) -> Iterator[tu
         f"{time_text(max(0.0, last.number), Rounding.UP)}.",
         last, "s",
     ), last  # fmt: skip
+
+
+def _offset(pencil: Pencil, offset_s: float) -> Value:
+    """A recorded offset as it stands; one that was fitted has endless digits, and is shortened."""
+    given = pencil.given(offset_s)
+    return given if len(given.text) <= _RECORDED_DIGITS else pencil.quoted(offset_s)
+
+
+def _offset_words(timing: TargetTiming, offset: Value) -> str:
+    return f", with {offset.text} s for induction and transfer" if timing.offset_s else ""
 
 
 def _plus(timing: TargetTiming, offset: Value) -> str:

@@ -215,6 +215,25 @@ def test_envelope_worked_on_paper() -> None:
     assert found.limit_time_s is None
 
 
+def test_the_same_fact_twice_counts_once() -> None:
+    """By hand: 40, 40 again and 90 have the middle sqrt(40 x 90) = 60; counted three times it would be 52.4."""
+    forty, ninety = (PublishedValue(PublishedKind.VALUE, v, v, 0.25) for v in (40, 90))
+    found = envelope([forty, forty, ninety], 1.645)
+    assert found is not None
+    assert found.band.mid == pytest.approx(60, rel=1e-12)
+
+
+def test_equal_limits_hold_as_long_as_the_shorter_test() -> None:
+    """By hand: below 5 tested for 100 s and for 1000 s holds for 100 s; a higher limit decides alone."""
+    short, long, high = (
+        PublishedValue(PublishedKind.UPPER, None, v, 0.6, t) for v, t in ((5, 100), (5, 1000), (9, 50))
+    )
+    for values, seconds in (([short, long], 100), ([long], 1000), ([short, long, high], 50)):
+        found = envelope(values, 1.645)
+        assert found is not None
+        assert found.limit_time_s == seconds
+
+
 def test_a_printed_limit_is_not_widened_and_ends_with_its_time() -> None:
     """
     `< 5`: low 0, no middle, high 5 as printed; ten minutes where no tested time is known, else the tested

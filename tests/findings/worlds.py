@@ -24,7 +24,7 @@ from builder.findings.plan.facts import (
     SaidFact,
 )
 from builder.findings.plan.option import plan_option
-from builder.findings.plan.result import FilmRow, Option
+from builder.findings.plan.result import Option
 from builder.findings.plan.sample import PlanFilm, PlanSample, stages_of
 from builder.records.terms import CoupleEffect, Edge, Effect, Exposure, Method, Role, State
 from tests.findings.fact_builder import FILMS, couple, etchant, facts, own, rate, recipe, said
@@ -138,9 +138,17 @@ def holding(option: Option) -> set[object]:
     return found | ({"look"} if option.verdict_by_look.order == 0 else set())
 
 
-def row_number(row: FilmRow) -> float | None:
-    """Return what a row may still lose."""
-    return row.allowed_nm
+def created(before: Option, after: Option) -> list[object]:
+    """Return everything that holds after and did not before; a film that was not reached did hold."""
+    old, new = words(before), words(after)
+    found: list[object] = [
+        (key, way)
+        for key in old
+        for way in (0, 1)
+        if key in new and new[key][way] == 0 and old[key][way] != 0
+    ]
+    pairs = ((before.verdict, after.verdict), (before.verdict_by_look, after.verdict_by_look))
+    return found + [pair for pair in pairs if pair[1].order == 0 != pair[0].order]
 
 
 _rates = st.sampled_from((0.0, 0.0003, 0.003, 0.03, 0.3, 3.0, 30.0, 300.0))
@@ -221,7 +229,7 @@ def _couples() -> st.SearchStrategy[list[CoupleFact]]:
 
 @st.composite
 def shipped_worlds(draw: st.DrawFn, lab: PlanFacts) -> World:
-    """A random sample in a recipe of the lab, or in an etchant alone; films are mostly those on record there."""
+    """A random sample in a recipe of the lab, or in its etchant alone; most films are on record there."""
     chosen = lab.etches[draw(st.sampled_from(sorted(lab.etches)))]
     bath = lab.etchants[chosen.etchant]
     on_record = sorted({*chosen.own, *bath.rows, *bath.said} & set(lab.films))

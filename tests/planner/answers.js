@@ -1,9 +1,11 @@
-// What the browser's model says to the cases of random_samples.py, in the form that Python gives it.
+// What the browser's model says to the cases of python_answers.py, in the form that Python gives it.
 (function (ew) {
   "use strict";
 
   const ends = (span) => (span ? [span.low, span.mid, span.high] : [null, null, null]);
   const codes = (remarks) => remarks.map((remark) => remark.code);
+
+  const asIs = (id) => id;
 
   function row(one) {
     return {
@@ -15,6 +17,7 @@
         one.thicknessNm, ...ends(one.loss), ...ends(one.lossByLook),
         one.allowedNm === Infinity ? "any" : one.allowedNm, one.spentNm === Infinity ? "infinite" : one.spentNm,
       ],
+      reason: ew.strings.reason(one, asIs),
     };
   }
 
@@ -30,7 +33,8 @@
         times.latestStopS, ...ends(one.undercut), one.phi, one.offsetS, one.overetch,
       ],
       rows: one.rows.map(row),
-      notes: codes(one.notes),
+      blocker: ew.strings.blocker(one, asIs),
+      notes: one.notes.map((note) => ew.strings.noteWords(note, asIs)),
       unstated: codes(one.unstated),
     };
   }
@@ -38,7 +42,7 @@
   function stage(one) {
     return {
       step: one.step, target: one.target, treat: one.treat, options: one.options.map(option),
-      excluded: one.excluded.map((left) => [left.recipe, left.etchant, left.reason.code]),
+      excluded: one.excluded.map((left) => [left.recipe, left.etchant, ew.strings.excludedWords(left.reason, asIs)]),
     };
   }
 

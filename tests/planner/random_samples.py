@@ -1,20 +1,14 @@
-"""Random samples, and the plans that the Python engine makes of them, in a form that both languages can give."""
+"""Random samples, made so that much of what a recipe knows comes up: words other than "unmeasured" are common."""
 
 from __future__ import annotations
 
 import math
 import random
-from collections.abc import Iterator, Sequence
+from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Any
 
-from builder.engine import RateBand, Schedule, Span
-from builder.findings.plan.facts import PlanFacts
-from builder.findings.plan.planning import plan
-from builder.findings.plan.result import FilmRow, Option, Plan, Remark, StagePlan
-from builder.findings.plan.sample import plan_sample
-from builder.records.samples import Sample
-from builder.records.terms import Origin
+from builder.findings.plan.facts import EtchFacts, PlanFacts
 
 # A sample file is JSON: what it holds is known only to its schema.
 SampleFile = dict[str, Any]
@@ -35,222 +29,150 @@ class Case:
     etchant: str | None
 
 
-def random_cases(facts: PlanFacts, count: int, seed: int) -> list[Case]:
-    """Return cases over all films, recipes and etchants; every etchant is asked alone at least once."""
+def recipe_cases(facts: PlanFacts, count: int, seed: int) -> list[Case]:
+    """Return cases for every recipe of the facts in turn."""
+    maker = _Maker(facts, random.Random(seed))
+    etches = sorted(facts.etches)
+    return [maker.case(number, facts.etches[etches[number % len(etches)]]) for number in range(count)]
+
+
+def etchant_cases(facts: PlanFacts, count: int, seed: int) -> list[Case]:
+    """Return cases for every etchant of the facts in turn, each asked alone."""
     maker = _Maker(facts, random.Random(seed))
     etchants = sorted(facts.etchants)
-    cases = []
-    for number in range(count):
-        alone = etchants[number % len(etchants)] if number % 3 == 0 else None
-        sample = maker.sample(number, maker.target_of(number))
-        cases.append(Case(sample, maker.random.choice(CONFIDENCES), alone))
-    return cases
+    return [maker.case_alone(number, etchants[number % len(etchants)]) for number in range(count)]
 
 
 class _Maker:
-    """Makes samples; half of the films are those that something on record is known of."""
+    """Makes samples; two films of three are those that the recipe or the etchant in question knows."""
 
     def __init__(self, facts: PlanFacts, source: random.Random) -> None:
-        self.random = source
-        self.films = sorted(facts.films)
-        self.masks = [id for id in self.films if facts.films[id].family in ("resist", "polymer", "nitride", "oxide")]
-        self.etches = sorted(facts.etches)
-        self.liquids = [id for id, etchant in sorted(facts.etchants.items()) if etchant.state == "liquid"]
-        self.etchants = sorted(facts.etchants)
-        self.tools = sorted({etch.tool for etch in facts.etches.values()})
         self.facts = facts
+        self.random = source
+        # A sample that names a family of films is refused before it is planned.
+        self.films = sorted(id for id, film in facts.films.items() if not film.is_family)
+        self.etches = sorted(facts.etches)
+        self.tools = sorted({etch.tool for etch in facts.etches.values()})
+        self.etchants = sorted(facts.etchants)
+        self.known: list[str] = self.films
+        self.masks: list[str] = self.films
 
-    def target_of(self, number: int) -> str:
-        """The targets of the recipes in turn, or any film."""
-        recipe = self.facts.etches[self.etches[number % len(self.etches)]]
-        known = self.random.choice(sorted(recipe.own) or list(recipe.targets))
-        return self.random.choice((self.random.choice(recipe.targets), known, self.random.choice(self.films)))
+    def case(self, number: int, recipe: EtchFacts) -> Case:
+        self.know(recipe.etchant, recipe)
+        target = self.random.choice((*recipe.targets, self.a_film()))
+        return Case(self.sample(f"random-{number}", target), self.random.choice(CONFIDENCES), None)
 
-    def sample(self, number: int, target: str) -> SampleFile:
-        data: SampleFile = {"sample": f"random-{number}", "layers": self.layers(target)}
+    def case_alone(self, number: int, etchant: str) -> Case:
+        self.know(etchant, None)
+        sample = self.sample(f"random-alone-{number}", self.a_film())
+        return Case(sample, self.random.choice(CONFIDENCES), etchant)
+
+    def know(self, etchant: str, recipe: EtchFacts | None) -> None:
+        """Choose the films that are asked for most of all from now on."""
+        published = self.facts.etchants[etchant]
+        own = [] if recipe is None else [*recipe.own, *recipe.targets]
+        self.known = sorted({*own, *published.rows, *published.said} & set(self.films)) or self.films
+        held = [] if recipe is None else [mask.film for mask in recipe.masks]
+        self.masks = sorted(held) or self.known
+
+    def sample(self, name: str, target: str) -> SampleFile:
+        data: SampleFile = {"sample": name, "layers": self.layers(target)}
         some = self.random.random
+        if some() < 0.35:
+            data["also_exposed"] = [self.exposed() for _ in range(self.random.randint(1, 2))]
+        if some() < 0.8:
+            data["back"] = "protected" if some() < 0.7 else self.film(self.a_film(), 50, 1000)
+        if some() < 0.8:
+            data["edge"] = self.random.choice(("open", "protected", "protected", "unused"))
         if some() < 0.5:
-            data["also_exposed"] = [self.exposed() for _ in range(self.random.randint(1, 3))]
-        if some() < 0.6:
-            data["back"] = "protected" if some() < 0.5 else self.film(self.any_film())
-        if some() < 0.6:
-            data["edge"] = self.random.choice(("open", "protected", "unused"))
-        if some() < 0.6:
-            data["goal"] = self.goal(data["layers"])
-        if some() < 0.2:
+            data["goal"] = self.goal()
+        if some() < 0.15:
             data["limits"] = self.limits()
         if some() < 0.2:
-            mount = {"carrier": self.random.choice((target, self.any_film())), "bond": self.random.choice(_BONDS)}
-            data["mount"] = mount if some() < 0.7 else {"bond": mount["bond"]}
+            data["mount"] = self.mount(target)
         if some() < 0.15:
-            data["temperature"] = self.random.choice(("room", "60 degC", "80 degC", "293.15 K", "20 - 30 degC"))
+            data["temperature"] = self.random.choice(("room", "60 degC", "80 degC", "293.15 K", "160 degC"))
         if some() < 0.2:
             data["steps"] = self.steps(sum(layer["role"] == "target" for layer in data["layers"]))
         return data
 
     def layers(self, target: str) -> list[SampleFile]:
-        masks = [{**self.film(self.mask()), "role": "mask"} for _ in range(self.random.choice((0, 1, 1, 1, 2)))]
-        targets = [{**self.film(target), "role": "target"}]
-        if self.random.random() < 0.25:
-            targets.append({**self.film(self.any_film()), "role": "target"})
+        masks = [
+            {**self.film(self.random.choice((*self.masks, self.a_film())), 300, 5000), "role": "mask"}
+            for _ in range(self.random.choice((0, 1, 1, 1, 1, 2)))
+        ]
+        targets = [{**self.film(target, 10, 3000), "role": "target"}]
+        if self.random.random() < 0.2:
+            targets.append({**self.film(self.a_film(), 5, 300), "role": "target"})
         unders = [
-            {**self.film(self.any_film()), "role": "under"} for _ in range(self.random.choice((0, 1, 1, 2, 3)))
+            {**self.film(self.a_film(), 10, 600_000), "role": "under"}
+            for _ in range(self.random.choice((0, 1, 1, 1, 2)))
         ]
         return [*masks, *targets, *unders]
 
-    def film(self, film: str) -> SampleFile:
-        data: SampleFile = {"film": film, "thickness": self.thickness()}
+    def film(self, film: str, low_nm: float, high_nm: float) -> SampleFile:
+        length = self.length(low_nm, high_nm)
+        data: SampleFile = {"film": film, "thickness": length}
+        if self.random.random() < 0.3:
+            data["thickness"] = f"{length} +/- {self.random.choice((1, 2, 5, 10))} %"
         if self.random.random() < 0.4:
-            data["allowed_loss"] = "any" if self.random.random() < 0.2 else self.length(0.1, 200.0)
+            data["allowed_loss"] = "any" if self.random.random() < 0.2 else self.length(0.3, 500.0)
         if self.random.random() < 0.1:
             data["surface"] = "critical"
         if self.random.random() < 0.2:
-            data["on"] = self.random.choice(("none", self.any_film()))
+            data["on"] = self.random.choice(("none", self.a_film()))
         return data
 
     def exposed(self) -> SampleFile:
-        data = self.film(self.random.choice((self.any_film(), self.random.choice(("au", "pt", "al-si")))))
+        data = self.film(self.random.choice((self.a_film(), self.a_film(), "au", "pt", "al-si")), 20, 2000)
         if self.random.random() < 0.7:
             data["exposed"] = self.random.choice(("face", "sidewall", "both-faces"))
         return data
 
-    def goal(self, layers: Sequence[SampleFile]) -> SampleFile:
-        goal: SampleFile = {}
+    def goal(self) -> SampleFile:
+        goal: SampleFile = {"depth": self.random.choice(("through", "through-wafer", self.length(5.0, 2000.0)))}
         if self.random.random() < 0.5:
-            goal["line"] = self.length(50.0, 50_000.0)
+            goal["line"] = self.length(500.0, 50_000.0)
         if self.random.random() < 0.4:
             goal["load_cm2"] = round(10 ** self.random.uniform(-1, 3), 2)
-        goal["depth"] = self.random.choice(("through", "through-wafer", self.length(1.0, 2000.0)))
         return goal
 
     def limits(self) -> SampleFile:
-        choice = self.random.choice
-        return choice(
-            (
-                {"methods": sorted(self.random.sample(_METHODS, 2))},
-                {"tools": sorted(self.random.sample(self.tools, min(4, len(self.tools))))},
-                {"temperature": choice(("60 degC", "100 degC"))},
-                {"etchants": sorted({self.facts.etches[id].etchant for id in self.random.sample(self.etches, 6)})},
-            )
+        few = min(4, len(self.tools))
+        choices = (
+            {"methods": sorted(self.random.sample(_METHODS, 3))},
+            {"tools": sorted(self.random.sample(self.tools, few))} if few else {},
+            {"temperature": self.random.choice(("60 degC", "100 degC"))},
+            {"etchants": sorted(self.random.sample(self.etchants, 30))},
         )
+        return self.random.choice(choices)
+
+    def mount(self, target: str) -> SampleFile:
+        bond = {"bond": self.random.choice(_BONDS)}
+        return {**bond, "carrier": self.random.choice((target, self.a_film()))} if self.random.random() < 0.7 else bond
 
     def steps(self, targets: int) -> list[SampleFile]:
         steps: list[SampleFile] = []
         for _ in range(targets):
             steps += [self.treatment() for _ in range(self.random.choice((0, 1, 2)))]
-            steps.append({"etch": self.random.choice(("any", "any", self.random.choice(self.etches)))})
+            steps.append({"etch": self.random.choice(("any", "any", *self.etches[:2]))})
         return [*steps, *(self.treatment() for _ in range(self.random.choice((0, 1))))]
 
     def treatment(self) -> SampleFile:
-        treat = self.random.choice(_TREATMENTS)
-        step: SampleFile = {"treat": treat}
-        if treat != "rinse" or self.random.random() < 0.3:
-            step["etchant"] = self.random.choice((self.random.choice(self.liquids), self.random.choice(self.etchants)))
+        step: SampleFile = {"treat": self.random.choice(_TREATMENTS)}
+        if step["treat"] != "rinse" or self.random.random() < 0.3:
+            step["etchant"] = self.random.choice(self.etchants)
         if self.random.random() < 0.8:
             step["time"] = self.random.choice(("60 s", "2 min", "0.5 h", "10 min"))
         if self.random.random() < 0.5:
             step["temperature"] = self.random.choice(("room", "21 degC", "80 degC"))
         return step
 
-    def any_film(self) -> str:
-        return self.random.choice(self.films)
-
-    def mask(self) -> str:
-        return self.random.choice((self.random.choice(self.masks), "resist-positive-a", self.any_film()))
-
-    def thickness(self) -> str:
-        text = self.length(2.0, 2e6)
-        if self.random.random() < 0.3:
-            return f"{text} +/- {self.random.choice((1, 2, 5, 10))} %"
-        return text
+    def a_film(self) -> str:
+        pool: Sequence[str] = self.known if self.random.random() < 0.67 else self.films
+        return self.random.choice(pool)
 
     def length(self, low_nm: float, high_nm: float) -> str:
         value = math.exp(self.random.uniform(math.log(low_nm), math.log(high_nm)))
         unit = self.random.choice(sorted(_UNITS))
         return f"{value / _UNITS[unit]:.4g} {unit}"
-
-
-def python_answers(facts: PlanFacts, reference: PlanFacts, cases: Sequence[Case]) -> list[Any]:
-    """Return what the Python engine says to each case."""
-    return [_answer(reference if case.etchant else facts, case) for case in cases]
-
-
-def _answer(facts: PlanFacts, case: Case) -> Any:
-    sample = Sample.from_raw(case.sample, "random.json", Origin.LAB)
-    planned: Plan = plan(
-        facts,
-        plan_sample(sample, facts.defaults),
-        sample.steps,
-        confidence=case.confidence,
-        etchant=case.etchant,
-    )
-    return [_stage(stage) for stage in planned.stages]
-
-
-def _stage(stage: StagePlan) -> Any:
-    return {
-        "step": stage.step,
-        "target": stage.target,
-        "treat": stage.treat,
-        "options": [_option(option) for option in stage.options],
-        "excluded": [[one.recipe, one.etchant, one.reason.code] for one in stage.excluded],
-    }
-
-
-def _option(option: Option) -> Any:
-    return {
-        "recipe": option.recipe,
-        "etchant": option.etchant,
-        "words": [option.verdict, option.verdict_by_look, option.mode, option.target_rank],
-        "flags": [option.proven, option.has_margin],
-        "numbers": [
-            *_ends(option.target_band),
-            *_times(option.schedule),
-            *_ends(option.undercut),
-            option.phi,
-            option.offset_s,
-            option.overetch,
-        ],
-        "rows": [_row(row) for row in option.rows],
-        "notes": _codes(option.notes),
-        "unstated": _codes(option.unstated),
-    }
-
-
-def _row(row: FilmRow) -> Any:
-    allowed = row.allowed_nm
-    return {
-        "film": [row.film, row.role, row.rank, row.hint, list(row.effects)],
-        "words": [row.verdict, row.verdict_by_look, row.ground, row.ground_by_look],
-        "caps": _codes(row.caps),
-        "lost": None if row.lost is None else row.lost.code,
-        "numbers": [
-            row.thickness_nm,
-            *_ends(row.loss),
-            *_ends(row.loss_by_look),
-            "any" if allowed is not None and math.isinf(allowed) else allowed,
-            _finite(row.spent_nm),
-        ],
-    }
-
-
-def _finite(value: float | None) -> float | str | None:
-    return "infinite" if value is not None and math.isinf(value) else value
-
-
-def _codes(remarks: Sequence[Remark]) -> list[str]:
-    return [str(remark.code) for remark in remarks]
-
-
-def _ends(span: Span | RateBand | None) -> Iterator[float | None]:
-    yield from (None, None, None) if span is None else (span.low, span.mid, span.high)
-
-
-def _times(schedule: Schedule) -> Iterator[float | None]:
-    yield from (
-        schedule.nominal_s,
-        schedule.clear_first_s,
-        schedule.clear_last_s,
-        schedule.first_look_s,
-        schedule.latest_stop_s,
-    )

@@ -23,6 +23,7 @@ PAGES = {
     "matrix of losses": "matrices/films.html",
     "matrix of selectivity": "matrices/selectivity.html",
     "selectivity of a film": "matrices/selectivity-sio2-thermal-wet.html",
+    "planner": "planner/index.html",
     "safety": "safety/index.html",
     "hydrofluoric acid": "safety/hydrofluoric-acid.html",
     "first wet etch": "safety/before-your-first-wet-etch.html",

@@ -88,12 +88,22 @@
     if (!values.length) return null;
     const highs = values.map((row) => highEnd(row, quantile));
     const high = highs.includes(null) ? null : Math.max(.../** @type {number[]} */ (highs));
-    const tested = values
-      .filter((row) => row.kind === "upper" && row.high === high)
-      .map((row) => (row.tested_s === null ? untestedS : row.tested_s));
     const low = Math.min(...values.map((row) => lowEnd(row, quantile)));
-    const limitS = tested.length ? Math.min(...tested) : null;
-    return { band: { low: low, mid: geometricMiddle(values), high: high }, limitS: limitS };
+    return { band: { low: low, mid: geometricMiddle(values), high: high }, limitS: limitTime(values, untestedS) };
+  }
+
+  /**
+   * A high end that is a printed limit holds only as long as somebody watched. Compared with values as printed,
+   * not as widened: asking for more confidence must not lift the limit.
+   * @param {PublishedFact[]} values @param {number} untestedS
+   */
+  function limitTime(values, untestedS) {
+    const topOf = (/** @type {string} */ kind) => Math.max(0, ...values.filter((row) => row.kind === kind).map((row) => row.high || 0));
+    const top = topOf("upper");
+    const tested = values
+      .filter((row) => row.kind === "upper" && row.high !== null && row.high === top)
+      .map((row) => (row.tested_s === null ? untestedS : row.tested_s));
+    return tested.length && top >= topOf("value") ? Math.min(...tested) : null;
   }
 
   /** Envelope of whole bands. @param {Band[]} bands @returns {Band} */

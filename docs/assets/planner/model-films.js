@@ -52,7 +52,13 @@
 
   /** Every film that should stay and that the etch reaches, or may reach. @param {Reach} reach @returns {Case[]} */
   function cases(reach) {
-    return [...around(reach), ...under(reach)].filter(isReached);
+    return [...around(reach), ...under(reach)].filter((one) => one.role !== "target" && isReached(one));
+  }
+
+  /** Targets of later stages that the etch reaches, or may reach, in its overetch. @param {Reach} reach @returns {Case[]} */
+  function laterTargets(reach) {
+    if (!reach.stage.below.some((film) => film.role === "target")) return [];
+    return under(reach).filter((one) => one.role === "target" && isReached(one));
   }
 
   /**
@@ -134,12 +140,13 @@
     }
     below.forEach(function (film, place) {
       const liesOn = place + 1 < below.length ? below[place + 1].film : null;
-      const isOpen = reach.isWet && sample.edge === "open";
+      const isOpen = reach.reachesBack && sample.edge === "open";
       const here = isOpen ? [fromEdge(timer, reach.startTimer), fromEdge(look, reach.startLook)] : [timer, look];
-      const caps = reach.isWet && sample.edge === null ? [remark("edge")] : [];
-      if (film.role !== "target") {
-        const more = { nextToTarget: place === 0, liesOn: liesOn, caps: caps };
-        found.push(makeCase(film, "under", here[0], here[1], more));
+      const caps = reach.reachesBack && sample.edge === null ? [remark("edge")] : [];
+      const isKept = film.role !== "target";
+      const more = { nextToTarget: place === 0, liesOn: liesOn, caps: caps };
+      found.push(makeCase(film, isKept ? "under" : "target", here[0], here[1], more));
+      if (isKept) {
         if (reach.facts.films[film.film].noble) found.push(...underNoble(reach, film, liesOn));
       }
       [timer, look] = beneath(reach, film, here[0], here[1]);
@@ -237,5 +244,5 @@
     return exposure === null || start === null ? null : start;
   }
 
-  ew.films = Object.freeze({ ORGANIC, remark, changed, reaching, known, isPorous, masksOf, cases, casesOfTreatment });
+  ew.films = Object.freeze({ ORGANIC, remark, changed, reaching, known, isPorous, masksOf, cases, laterTargets, casesOfTreatment });
 })((globalThis.etchwright = globalThis.etchwright || {}));

@@ -32,7 +32,7 @@
       exposureByLook: one.byLook,
       loss: ew.times.loss(known.band, one.byTimer, phi, one.faces),
       lossByLook: ew.times.loss(known.band, one.byLook, phi, one.faces),
-      allowedNm: allowed, verdict: finalWord(word, caps, lost), verdictByLook: finalWord(wordLook, caps, lostLook),
+      allowedNm: allowed, verdict: finalWord(word, one.byTimer, caps, lost), verdictByLook: finalWord(wordLook, one.byLook, caps, lostLook),
       ground: word.ground, groundByLook: wordLook.ground, rank: known.rank, effects: known.adverse, caps: caps,
       lost: lost, hint: known.hint, assumed: one.film.assumed, spentNm: one.film.spentNm, sources: known.sources,
     };
@@ -111,11 +111,11 @@
     return ofLeast === null ? left : Math.min(left, ofLeast);
   }
 
-  /** @param {Word} word @param {Remark[]} caps @param {Remark | null} lost */
-  function finalWord(word, caps, lost) {
+  /** @param {Word} word @param {Exposure | null} exposure @param {Remark[]} caps @param {Remark | null} lost */
+  function finalWord(word, exposure, caps, lost) {
     if (lost) return "lost";
     // What covers the back decides, and nobody said what does: neither safe nor lost.
-    if (caps.some((cap) => cap.code === "back")) return "borderline";
+    if (caps.some((cap) => cap.code === "back")) return exposure === null ? "unmeasured" : "borderline";
     return caps.length ? ew.words.capped(word.verdict) : word.verdict;
   }
 

@@ -30,6 +30,7 @@
       proven: Boolean(recipe && recipe.status === "proven" && known.rank === "own"),
       hazard: etching.etchant.hazard, hasMargin: hasMargin(facts, rows),
       phi: timing.cut.phi, offsetS: timing.cut.offsetS, overetch: timing.cut.overetch,
+      later: laterOf(reach),
     };
     whenAsked(option, "notes", () => ew.judging.distinctRemarks([...notes(reach, known), ...couples.notes]));
     whenAsked(option, "unstated", () => ew.judging.distinctRemarks(unstated(reach, rows)));
@@ -73,15 +74,39 @@
     const { recipe } = etching;
     const target = stage.target;
     const depth = stage.sample.depthNm;
-    const left = target.spentNm === null ? target.thicknessNm : target.thicknessNm - target.spentNm;
-    const through = depth === null || depth >= left;
+    const through = isThrough(stage.sample, target);
+    const [left, tolerance] = leftOf(target);
+    // Half of what may be left is no likely thickness, so no time is likely either.
+    const band = target.spentNm === null && known.band ? Object.assign({}, known.band, { mid: null }) : known.band;
     /** @type {Cut} */
     const cut = {
-      depthNm: through || depth === null ? left : depth, thicknessNm: left, tolerance: target.tolerance,
+      depthNm: through || depth === null ? left : depth, thicknessNm: left, tolerance: tolerance,
       phi: phiOf(facts, etching), offsetS: recipe ? recipe.offset_s : 0, overetch: recipe ? recipe.overetch : 0,
       reactionS: reactionOf(facts, etching), through: through,
     };
-    return { band: known.band, cut: cut, schedule: ew.times.schedule(facts, known.band, cut) };
+    return { band: band, cut: cut, schedule: ew.times.schedule(facts, band, cut) };
+  }
+
+  /** Is the whole target removed? @param {PlanSample} sample @param {PlanFilm} target */
+  function isThrough(sample, target) {
+    return sample.depthNm === null || sample.depthNm >= target.thicknessNm;
+  }
+
+  /** The middle of what is left of a target, nm, and the half-width around it as a fraction. @param {PlanFilm} target @returns {[number, number]} */
+  function leftOf(target) {
+    if (target.spentNm === 0) return [target.thicknessNm, target.tolerance];
+    const most = target.thicknessNm * (1 + target.tolerance);
+    const least = target.spentNm === null ? 0 : Math.max(0, target.thicknessNm * (1 - target.tolerance) - target.spentNm);
+    return [(most + least) / 2, (most - least) / (most + least)];
+  }
+
+  /** What the etch takes at worst of targets that a later stage removes. @param {Reach} reach @returns {LaterTarget[]} */
+  function laterOf(reach) {
+    return ew.films.laterTargets(reach).map((/** @type {Case} */ one) => {
+      const band = ew.films.known(reach, one.film.film).band;
+      const lost = ew.times.loss(band, one.byTimer, reach.timing.cut.phi, 1);
+      return { film: one.film.film, thicknessNm: one.film.thicknessNm, lossNm: lost.high };
+    });
   }
 
   /** Non-uniformity: the recipe's, else the lab's default for its method. @param {Facts} facts @param {Etching} etching @returns {number} */
@@ -219,15 +244,16 @@
     const { sample, below } = reach.stage;
     const found = [];
     if (reach.reachesBack && sample.back === null && !sample.backProtected) found.push(remark("back"));
-    if (reach.isWet && sample.edge === null && rows.some((row) => row.role === "under")) found.push(remark("edge"));
+    if (reach.reachesBack && sample.edge === null && rows.some((row) => row.role === "under")) found.push(remark("edge"));
     for (const row of rows) {
       for (const cap of row.caps) {
         if (cap.code === "under-noble") found.push(remark("under-noble", { film: cap.params.film }));
       }
-      if (row.allowedNm === null && !row.assumed) found.push(remark("allowed", { film: row.film }));
+      // What an earlier step took is not known there, and no allowance would help.
+      if (row.allowedNm === null && !row.assumed && row.spentNm !== null) found.push(remark("allowed", { film: row.film }));
     }
     const recipe = reach.etching.recipe;
-    if (sample.temperature === null && (!recipe || recipe.temperature === null)) found.push(remark("temperature"));
+    if (reach.asked.temperature === null && (!recipe || recipe.temperature === null)) found.push(remark("temperature"));
     if (sample.lineNm === null && ew.films.masksOf(reach.stage).length && isIsotropic(reach)) found.push(remark("line"));
     if (sample.loadCm2 === null && reach.etching.etchant.state === "plasma") found.push(remark("load"));
     if (sample.throughWafer && sample.carrier === null && !below.length) found.push(remark("stop"));
@@ -241,7 +267,9 @@
     const ordered = rows.slice().sort(
       (one, other) =>
         order[other.verdict] - order[one.verdict] || order[other.verdictByLook] - order[one.verdictByLook] ||
-        byCode(one.role, other.role) || byCode(one.film, other.film) || one.thicknessNm - other.thicknessNm,
+        byCode(one.role, other.role) || byCode(one.film, other.film) || one.thicknessNm - other.thicknessNm ||
+        // No two rows change places because they were listed so.
+        byCode(JSON.stringify(one), JSON.stringify(other)),
     );
     const noble = new Set();
     return ordered.filter(function (row) {
@@ -262,5 +290,5 @@
     );
   }
 
-  ew.option = Object.freeze({ planOption, phiOf, reactionOf, gasFacts, unstated, judgedRows, worstOf, filmsOf });
+  ew.option = Object.freeze({ planOption, phiOf, reactionOf, gasFacts, unstated, judgedRows, worstOf, filmsOf, isThrough });
 })((globalThis.etchwright = globalThis.etchwright || {}));

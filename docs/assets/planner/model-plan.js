@@ -59,7 +59,9 @@
     const recipe = /** @type {EtchFacts} */ (etching.recipe);
     if (recipe.status === "retired") return remark("retired");
     const refused = ew.evidence.at(facts.refused, recipe.tool) || {};
-    for (const film of ew.option.filmsOf(sample)) {
+    // The order of listing is no reason.
+    const exposed = sample.exposed.slice().sort((one, other) => ew.couples.byCode(one.film, other.film));
+    for (const film of [...sample.layers, ...exposed, ...(sample.back ? [sample.back] : [])]) {
       const words = ew.evidence.at(refused, film.film);
       if (words !== undefined) return remark("tool-refuses", { film: film.film, words: words });
     }
@@ -159,10 +161,12 @@
     return Object.assign(withoutClashes(facts, [option], state.wetWith), bare);
   }
 
-  /** The stage that comes next; after the last target, what is below it lies open. @param {PlanState} state @returns {Stage} */
+  /** The stage that comes next; after the last target, its edges and what is below it lie open. @param {PlanState} state @returns {Stage} */
   function stageAfter(state) {
     const stages = ew.sample.stagesOf(state.sample);
-    return stages[Math.min(state.removed, stages.length - 1)];
+    if (state.removed < stages.length) return stages[state.removed];
+    const last = stages[stages.length - 1];
+    return Object.assign({}, last, { above: [last.target, ...last.above] });
   }
 
   /** What a treatment does to every film that it reaches. @param {Facts} facts @param {PlanState} state @param {PlanStep} step @param {Asked} asked @returns {Option} */
@@ -178,7 +182,8 @@
       .map((/** @type {Case} */ one) => Object.assign({}, one, { byLook: one.byTimer }));
     const couples = ew.couples.couplings(reach, found);
     const unknown = ew.times.UNKNOWN_SPAN;
-    const caps = { targetRank: "own", caps: couples.planCaps, undercut: unknown, undercutByLook: unknown };
+    // The step sets the time, so no target's rate enters; but no own run has tried this chamber either.
+    const caps = { targetRank: "literature", caps: couples.planCaps, undercut: unknown, undercutByLook: unknown };
     const rows = ew.option.judgedRows(reach, found, caps, couples);
     const best = step.timeS !== null && !couples.planCaps.length ? "holds" : "borderline";
     const remark = ew.films.remark;
@@ -193,13 +198,13 @@
         ...couples.notes,
       ],
       unstated: ew.option.unstated(reach, rows), proven: false, hazard: etching.etchant.hazard, hasMargin: false,
-      phi: timing.cut.phi, offsetS: 0, overetch: 0,
+      phi: timing.cut.phi, offsetS: 0, overetch: 0, later: [],
     };
   }
 
   /** Films in the windows, top first. @param {PlanState} state @param {Stage} stage */
   function openFilms(state, stage) {
-    const isLeft = state.removed < ew.sample.stagesOf(state.sample).length;
+    const isLeft = state.removed < ew.sample.stagesOf(state.sample).length || !ew.option.isThrough(state.sample, stage.target);
     return isLeft ? [stage.target, ...stage.below] : stage.below.filter((film) => film.role !== "target");
   }
 
@@ -245,7 +250,8 @@
   /** @param {PlanState} state @param {StagePlan} stage @returns {PlanState} */
   function afterEtch(state, stage) {
     // An etch ends with its own rinse; what it was etched with is no longer on the sample.
-    return { sample: ew.sample.wornSample(state.sample, stage.options[0] || null), removed: state.removed + 1, wetWith: null };
+    const after = ew.sample.cut(ew.sample.wornSample(state.sample, stage.options[0] || null), state.removed);
+    return { sample: after, removed: state.removed + 1, wetWith: null };
   }
 
   /** @param {Facts} facts @param {PlanState} state @param {StagePlan} stage @param {PlanStep} step @returns {PlanState} */
@@ -253,7 +259,7 @@
     const wetWith = step.treat === "rinse" ? null : step.etchant || state.wetWith;
     if (stage.etchant === null) return { sample: state.sample, removed: state.removed, wetWith: wetWith };
     const after = ew.sample.wornSample(state.sample, stage.options[0] || null);
-    return { sample: step.treat === "strip" ? ew.sample.stripped(facts, after) : after, removed: state.removed, wetWith: wetWith };
+    return { sample: step.treat === "strip" ? ew.sample.stripped(facts, after, state.removed) : after, removed: state.removed, wetWith: wetWith };
   }
 
   /** The worst word among the best options of all stages. @param {Plan} planned */

@@ -23,10 +23,10 @@
   /** @param {Facts} facts @param {any} text @returns {Range | null} */
   function temperature(facts, text) {
     if (text === undefined || text === null) return null;
-    if (text === ROOM) return { low: facts.rules.room_temperature_k[0], high: facts.rules.room_temperature_k[1] };
+    if (text === ROOM) return { low: rounded(facts.rules.room_temperature_k[0]), high: rounded(facts.rules.room_temperature_k[1]) };
     const found = ew.units.parse(facts.units, text, "temperature");
-    if (found.form === "value") return { low: found.value, high: found.value };
-    return found.form === "range" ? { low: found.low, high: found.high } : null;
+    if (found.form === "value") return { low: rounded(found.value), high: rounded(found.value) };
+    return found.form === "range" ? { low: rounded(found.low), high: rounded(found.high) } : null;
   }
 
   /** A film of a sample file that has passed its check. @param {Facts} facts @param {any} film @param {string} role @returns {PlanFilm} */
@@ -69,7 +69,7 @@
   function planSteps(facts, file) {
     return (file.steps || []).map((/** @type {any} */ step) => ({
       treat: step.treat || null, etch: step.etch || null, etchant: step.etchant || null,
-      timeS: step.time === undefined ? null : ew.units.parse(facts.units, step.time, "time").value,
+      timeS: step.time === undefined ? null : number(facts, step.time, "time"),
       temperature: temperature(facts, step.temperature),
     }));
   }
@@ -91,11 +91,10 @@
 
   /** A sample as the best option leaves it: each film with its worst loss. @param {PlanSample} sample @param {Option | null} option @returns {PlanSample} */
   function wornSample(sample, option) {
+    const bottom = sample.layers[sample.layers.length - 1];
     const after = (/** @type {PlanFilm} */ film) => {
       if (option === null) return worn(film, null);
-      const losses = option.rows
-        .filter((row) => row.film === film.film && row.role === film.role && row.thicknessNm === film.thicknessNm)
-        .map((row) => row.loss.high);
+      const losses = lossesOf(option, film, film === bottom);
       if (!losses.length) return film;
       if (film.allowedNm === Infinity && losses.includes(null)) return worn(film, Infinity);
       return worn(film, losses.includes(null) ? null : Math.max(.../** @type {number[]} */ (losses)));
@@ -105,11 +104,34 @@
     });
   }
 
-  /** A strip leaves no resist. @param {Facts} facts @param {PlanSample} sample @returns {PlanSample} */
-  function stripped(facts, sample) {
-    const layers = sample.layers.filter((film) => film.role !== "mask" || !ew.films.ORGANIC.has(facts.films[film.film].family));
+  /**
+   * Every worst loss on record of a film: the bottom layer loses at the back too. A target that is not yet removed
+   * is eaten in the windows, by a treatment or another target's overetch; afterwards at the edges it was cut to.
+   * @param {Option} option @param {PlanFilm} film @param {boolean} isBottom @returns {(number | null)[]}
+   */
+  function lossesOf(option, film, isBottom) {
+    const isTarget = film.role === "target";
+    const roles = [...(isTarget ? ["under", "exposed"] : [film.role]), ...(isBottom ? ["back"] : [])];
+    const isIt = (/** @type {{film: string, thicknessNm: number}} */ one) => one.film === film.film && one.thicknessNm === film.thicknessNm;
+    const rows = option.rows.filter((row) => isIt(row) && roles.includes(row.role) && !(row.assumed && row.role === "back"));
+    const later = isTarget ? option.later.filter(isIt) : [];
+    return [...rows.map((row) => row.loss.high), ...later.map((one) => one.lossNm)];
+  }
+
+  /** What is left of a target has fresh edges: what its open face had lost went with it. @param {PlanSample} sample @param {number} removed @returns {PlanSample} */
+  function cut(sample, removed) {
+    const target = stagesOf(sample)[removed].target;
+    const layers = sample.layers.map((film) => (film === target ? ew.films.changed(film, { spentNm: 0 }) : film));
     return Object.assign({}, sample, { layers: layers });
   }
 
-  ew.sample = Object.freeze({ planSample, planSteps, stagesOf, wornSample, stripped, rounded });
+  /** A strip leaves no resist; what is left of the targets under it then lies open. @param {Facts} facts @param {PlanSample} sample @param {number} removed @returns {PlanSample} */
+  function stripped(facts, sample, removed) {
+    const layers = sample.layers.filter((film) => film.role !== "mask" || !ew.films.ORGANIC.has(facts.films[film.film].family));
+    if (layers.length === sample.layers.length || layers.some((film) => film.role === "mask")) return Object.assign({}, sample, { layers: layers });
+    const bared = stagesOf(sample).slice(0, removed).map((stage) => ew.films.changed(stage.target, { role: "exposed" }));
+    return Object.assign({}, sample, { layers: layers, exposed: [...sample.exposed, ...bared] });
+  }
+
+  ew.sample = Object.freeze({ planSample, planSteps, stagesOf, wornSample, cut, stripped, rounded });
 })((globalThis.etchwright = globalThis.etchwright || {}));
