@@ -2,15 +2,17 @@
 
 from __future__ import annotations
 
+import dataclasses
 import datetime
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 from pathlib import Path
 
 from builder.checking.rule import Checked
-from builder.checking.rules import RULES
+from builder.checking.rules import RULES, WHOLE_RULES
 from builder.checking.schema import check_shape
 from builder.checking.schema_files import Schemas
+from builder.checking.whole_records import whole_files
 from builder.problems import Problem, Severity, has_errors, sorted_problems
 from builder.reading.lab_tree import Kind, RawFile, Shipped, find_shipped, read_lab
 from builder.records.lab import CheckedFile, LabRecords, build_lab
@@ -87,6 +89,11 @@ def check_records(
         today=as_of or records.settings.as_of or datetime.date.today(),
     )
     for rule in RULES:
+        found += rule.problems(checked)
+    if has_errors(found):
+        whole = build_lab(_checked_file(file) for file in whole_files(fit))
+        checked = dataclasses.replace(checked, records=whole)
+    for rule in WHOLE_RULES:
         found += rule.problems(checked)
     return None if has_errors(found) else records, sorted_problems(found)
 

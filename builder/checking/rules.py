@@ -26,6 +26,8 @@ RULES: tuple[Rule, ...] = (
     *rules_recipe_tools.RULES,
     *rules_runs.RULES,
     *rules_samples.RULES,
-    *rules_safety.RULES,
 )
-"""Run in this order; the problems are sorted by place in the end."""
+"""Run on all records of the right shape, also where a reference leads nowhere."""
+
+WHOLE_RULES: tuple[Rule, ...] = (*rules_safety.RULES,)
+"""Run on the records that hang together; these rules may follow any reference without asking."""

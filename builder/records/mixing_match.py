@@ -57,9 +57,7 @@ def chemical_presence(records: LabRecords, chemical_id: str) -> Presence:
     chemical = records.chemicals[chemical_id]
     bearers = dict(_chemical_bearers(records, chemical, chemical.name))
     for part in chemical.parts:
-        inner = records.chemicals.get(part.chemical)
-        if inner is None:
-            continue  # an error of its own, which leaves no records to plan with
+        inner = records.chemicals[part.chemical]
         for handle, bearer in _chemical_bearers(records, inner, f"{inner.name} (in {chemical.name})"):
             bearers.setdefault(handle, bearer)
     parts = frozenset(part.chemical for part in chemical.parts)
@@ -75,8 +73,6 @@ def etchant_presence(records: LabRecords, etchant_id: str) -> Presence:
         bearers[handle] = own
     chemicals: frozenset[str] = frozenset()
     for part in etchant.parts:
-        if part.chemical not in records.chemicals:
-            continue  # as above
         inner = chemical_presence(records, part.chemical)
         chemicals |= inner.chemicals
         for handle, bearer in inner.bearers.items():

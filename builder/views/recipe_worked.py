@@ -78,8 +78,8 @@ def _time_steps(pencil: Pencil, timing: TargetTiming, ends: Ends) -> Iterator[tu
     yield shown(
         f"First look for {words}: 0.8 of the time in which the thinnest place "
         f"({share_text(timing.tolerance)} thinner) is gone where the etch is fastest "
-        f"({share_text(timing.phi)} faster than the high end){_offset_words(timing, offset)}. The timer shows "
-        f"{time_text(max(0.0, first.number), Rounding.DOWN)}.",
+        f"({share_text(timing.phi)} faster than the high end){_offset_words(timing, offset)}. The timer "
+        f"shows {time_text(max(0.0, first.number), Rounding.DOWN)}.",
         first, "s",
     ), first  # fmt: skip
     thick = f"{depth.text} × (1 + {delta.text}) ÷ ({ends.low.text} × (1 − {phi.text})) × 60"

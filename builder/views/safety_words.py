@@ -8,7 +8,6 @@ STANDING_SENTENCE = (
     "The safety data sheet, the local rules and licensed practice come first. "
     "This page informs; it authorises nothing."
 )
-NO_RECORD = "no record: treat as incompatible"
 NO_CONTAINER_RECORD = "no record: do not use it for this"
 VERIFY = "Recalled, not checked: verify against the SDS."
 SIGNAL_WORDS = {

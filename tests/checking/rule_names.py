@@ -9,7 +9,7 @@ from collections.abc import Iterator
 from pathlib import Path
 
 import builder
-from builder.checking.rules import RULES
+from builder.checking.rules import RULES, WHOLE_RULES
 
 FOLDER_RULES = frozenset(
     {
@@ -58,7 +58,7 @@ def rule_names() -> frozenset[str]:
             if path.stem.startswith("rules_safety"):
                 continue  # named through the table of rules below
             names.update(_names(ast.parse(path.read_text(encoding="utf-8")), path.name))
-    names.update(rule.name for rule in RULES)
+    names.update(rule.name for rule in (*RULES, *WHOLE_RULES))
     return frozenset(names - _NEVER_SHOWN)
 
 

@@ -130,7 +130,9 @@ class _Maker:
         return data
 
     def goal(self) -> SampleFile:
-        goal: SampleFile = {"depth": self.random.choice(("through", "through-wafer", self.length(5.0, 2000.0)))}
+        goal: SampleFile = {
+            "depth": self.random.choice(("through", "through-wafer", self.length(5.0, 2000.0)))
+        }
         if self.random.random() < 0.5:
             goal["line"] = self.length(500.0, 50_000.0)
         if self.random.random() < 0.4:
@@ -149,7 +151,11 @@ class _Maker:
 
     def mount(self, target: str) -> SampleFile:
         bond = {"bond": self.random.choice(_BONDS)}
-        return {**bond, "carrier": self.random.choice((target, self.a_film()))} if self.random.random() < 0.7 else bond
+        return (
+            {**bond, "carrier": self.random.choice((target, self.a_film()))}
+            if self.random.random() < 0.7
+            else bond
+        )
 
     def steps(self, targets: int) -> list[SampleFile]:
         steps: list[SampleFile] = []

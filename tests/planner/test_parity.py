@@ -60,7 +60,11 @@ def _with_ties_sorted(answers: Sequence[Answer]) -> Sequence[Answer]:
         keys = [(*row["words"][:2], *row["film"][:2], row["numbers"][0]) for row in option["rows"]]
         first = {key: keys.index(key) for key in keys}
         option["rows"].sort(
-            key=lambda row: (first[keys[places[id(row)]]], json.dumps(row["numbers"]), json.dumps(row["caps"]))
+            key=lambda row: (
+                first[keys[places[id(row)]]],
+                json.dumps(row["numbers"]),
+                json.dumps(row["caps"]),
+            )
         )
     return answers
 

@@ -64,7 +64,9 @@ def test_a_blank_field_is_not_stated(stateful: Page) -> None:
     assert state["file"]["goal"] == {"line": "10 um", "load_cm2": 12}
     state = _after(stateful, line, load, {**line, "value": ""}, {**load, "value": ""})
     assert "goal" not in state["file"]
-    state = _after(stateful, _add("a", "target"), {"type": "set", "field": "layers/0/allowed_loss", "value": "5 nm"})
+    state = _after(
+        stateful, _add("a", "target"), {"type": "set", "field": "layers/0/allowed_loss", "value": "5 nm"}
+    )
     assert state["file"]["layers"][0]["allowed_loss"] == "5 nm"
 
 
@@ -104,12 +106,16 @@ def test_an_unknown_action_is_refused(stateful: Page) -> None:
         assert refused, name
 
 
-def test_the_link_of_the_command_restores_the_sample(stateful: Page, lab: PlannerLab, data: dict[str, Any]) -> None:
+def test_the_link_of_the_command_restores_the_sample(
+    stateful: Page, lab: PlannerLab, data: dict[str, Any]
+) -> None:
     """What `etchwright plan --link` prints opens the same sample, for every example of the lab."""
     stateful.evaluate("(given) => { window.data = etchwright.data.read(given); }", data)
     assert len(lab.records.samples) >= 10
     for sample in lab.records.samples.values():
-        found = stateful.evaluate("(link) => etchwright.address.decode(link, data.facts)", planner_link(sample))
+        found = stateful.evaluate(
+            "(link) => etchwright.address.decode(link, data.facts)", planner_link(sample)
+        )
         assert found["notices"] == []
         assert found["file"] == json.loads(sample.json_text)
 
@@ -125,7 +131,16 @@ def test_a_link_keeps_what_is_asked(stateful: Page) -> None:
 
 
 @pytest.mark.parametrize(
-    "fragment", ["#s9=abc", "#s1=%%%", "#s1=eyJ", "#s1=W10", "#s1=eyJsYXllcnMiOjF9", "#confidence=0.123", "#etchant=constructor"]
+    "fragment",
+    [
+        "#s9=abc",
+        "#s1=%%%",
+        "#s1=eyJ",
+        "#s1=W10",
+        "#s1=eyJsYXllcnMiOjF9",
+        "#confidence=0.123",
+        "#etchant=constructor",
+    ],
 )
 def test_a_link_that_cannot_be_read_says_so(stateful: Page, fragment: str) -> None:
     """An unknown version, a cut or a damaged link explains itself and restores nothing wrong."""
@@ -149,7 +164,9 @@ def test_a_saved_file_is_a_sample(stateful: Page, lab: PlannerLab, tmp_path: Pat
     """What the page saves passes the checks of `etchwright plan`, and the page reads it back."""
     for sample in lab.records.samples.values():
         file = json.loads(sample.json_text)
-        text = stateful.evaluate("(file) => etchwright.sampleFile.toText({...file, edge: file.edge || ''})", file)
+        text = stateful.evaluate(
+            "(file) => etchwright.sampleFile.toText({...file, edge: file.edge || ''})", file
+        )
         raw = Raw(json.loads(text), Positions({"": (0, 0)}), "saved.json")
         checked, problems = check_sample_data(raw, lab.records)
         assert checked is not None, problems
@@ -174,7 +191,9 @@ def test_what_no_sample_has_is_left_out(stateful: Page) -> None:
     assert {"goal", "also_exposed", "edge", "layers/0/onclick", "limits/methods/1"} <= set(found["dropped"])
 
 
-@pytest.mark.parametrize("text", ["", "[", "layers: []", "5", "null", '{"layers": {}}', "[" * 5000, '"' + "x" * 300_000 + '"'])
+@pytest.mark.parametrize(
+    "text", ["", "[", "layers: []", "5", "null", '{"layers": {}}', "[" * 5000, '"' + "x" * 300_000 + '"']
+)
 def test_a_file_that_is_no_sample_is_refused(stateful: Page, text: str) -> None:
     """Whatever a file holds, the page says what is wrong with it and carries on."""
     found = stateful.evaluate("(text) => etchwright.sampleFile.fromText(text)", text)

@@ -12,7 +12,14 @@ from playwright.sync_api import Page
 
 from builder.records.quantities import QuantityFault, parse_quantity
 from builder.records.unit_table import Dimension, unit_table_json
-from builder.views.number_text import Rounding, length_text, plain_number, rate_text, temperature_text, time_text
+from builder.views.number_text import (
+    Rounding,
+    length_text,
+    plain_number,
+    rate_text,
+    temperature_text,
+    time_text,
+)
 from tests.browser import ROOT
 
 _TABLE = json.loads((ROOT / "tests" / "cases" / "quantities.json").read_text(encoding="utf-8"))
@@ -112,6 +119,7 @@ def test_plain_numbers_and_temperatures_are_shown_alike(model: Page) -> None:
     numbers = _random_numbers(400)
     python = [[plain_number(one), temperature_text(one)] for one in numbers]
     browser = model.evaluate(
-        "(all) => all.map((one) => [etchwright.numbers.plain(one), etchwright.numbers.temperature(one)])", numbers
+        "(all) => all.map((one) => [etchwright.numbers.plain(one), etchwright.numbers.temperature(one)])",
+        numbers,
     )
     assert [pair for pair in zip(numbers, python, browser, strict=True) if pair[1] != pair[2]] == []

@@ -15,7 +15,7 @@ from builder.findings.plan.gather import gather
 from builder.findings.plan.planning import plan
 from builder.findings.plan.result import ExcludedCode, NoteCode, StagePlan
 from builder.findings.plan.sample import plan_sample
-from builder.findings.safety import plan_safety, sequence_findings
+from builder.findings.safety import forbidden_pairs, plan_safety, sequence_findings
 from builder.records.etches import AfterStep
 from builder.records.lab import LabRecords
 from builder.records.record import Part
@@ -395,3 +395,11 @@ def test_an_arsenide_in_an_acid_without_a_rule_is_a_caution_not_silence() -> Non
     """No record says that sulfuric acid and peroxide give no arsine; so the caution says that it may."""
     found = plan_safety(RECORDS, "gaas-h2so4", Method.WET, ["gaas"])
     assert "film-gas-unknown" in {finding.code for finding in found.findings}
+
+
+def test_liquids_and_films_are_looked_at_in_one_question() -> None:
+    """Two liquids in this order and the films between: pairs that must not meet come first."""
+    found = forbidden_pairs(RECORDS, ["acetone", "piranha"], ["resist-positive-a"])
+    assert [one.forbidden for one in found] == sorted((one.forbidden for one in found), reverse=True)
+    assert {"unrinsed-steps", "film-meets-etchant"} == {one.code for one in found}
+    assert forbidden_pairs(RECORDS, ["acetone"], ["sio2-thermal-wet"]) == ()

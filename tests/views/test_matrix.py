@@ -83,7 +83,7 @@ def test_a_longer_time_never_improves_a_word() -> None:
 
 def test_published_columns_hold_no_record_of_the_lab() -> None:
     """A column of published facts would be the same in a lab without any record of its own."""
-    records, computed = lab()
+    records, _ = lab()
     published = [column for column in _columns() if column.kind == PUBLISHED_COLUMN]
     own_sources = {one.id for one in records.sources.values() if one.origin == "lab"}
     assert own_sources and len(published) > 80
