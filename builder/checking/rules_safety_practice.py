@@ -51,15 +51,15 @@ def chlorine_on_aluminium(
             "chlorine-on-aluminium", f"{why}. Passivate before venting, then rinse in water at once."
         )
         return
-    kinds = {step.kind for step in after}
-    missing = [
-        word
-        for word, accepted in (
-            ("passivation or strip", {AfterStepKind.PASSIVATE, AfterStepKind.STRIP}),
-            ("water rinse", {AfterStepKind.RINSE, AfterStepKind.QUENCH}),
-        )
-        if not kinds & accepted
-    ]
+    kinds = [step.kind for step in after]
+    rinses = [place for place, kind in enumerate(kinds) if kind in _BREAKING_KINDS]
+    # What comes after the first rinse happens outside the tool: the film has seen air by then.
+    in_tool = set(kinds[: rinses[0]] if rinses else kinds)
+    missing = []
+    if not in_tool & {AfterStepKind.PASSIVATE, AfterStepKind.STRIP}:
+        missing.append("passivation or strip before the rinse" if rinses else "passivation or strip")
+    if not rinses:
+        missing.append("water rinse")
     if missing:
         yield forbid(
             "chlorine-on-aluminium", f"{why}. The steps after it name no {' and no '.join(missing)}."

@@ -11,15 +11,34 @@ from builder.findings.plan.facts import PlanFacts
 from builder.findings.plan.stored import plain
 from builder.records.etches import Etch
 from builder.records.lab import LabRecords
-from builder.records.runs import Run
 from builder.views.number_text import in_words
 from builder.views.recipe_record import AfterRow, StepRow, recipe_record
 from builder.views.references import Fact
 from builder.views.safety_strip import PrecautionBlock, SafetyStrip, etchant_strip
 
 _HASH_DIGITS = 12
-_NOT_WRITTEN_IN = frozenset({"etch", "file", "origin", "pointer"})
-"""Fields of a run that its table does not hold: they say where the row stands."""
+COLUMNS = (
+    "date",
+    "wafer",
+    "film",
+    "film_lot",
+    "prior",
+    "time_s",
+    "before_nm",
+    "after_nm",
+    "u_nm",
+    "temperature_degc",
+    "load_cm2",
+    "carrier",
+    "window_um",
+    "bath",
+    "bath_hours",
+    "wafers_since_clean",
+    "event",
+    "note",
+    "site_spread",
+)
+"""Columns of a run table, as people write it; a test holds them to the schema."""
 _AT_THE_BENCH = ("Protective equipment", "Controls", "Besides")
 
 
@@ -63,6 +82,7 @@ class RunCard:
     clearing: str
     if_not_cleared: str
     never: tuple[str, ...]
+    not_for: tuple[str, ...]
     signal: str
     hazards: tuple[CardHazard, ...]
     unknown: tuple[str, ...]
@@ -87,11 +107,11 @@ def _card(records: LabRecords, facts: PlanFacts, etch: Etch) -> RunCard:
         steps=tuple(map(_step, record.steps)), after=tuple(map(_after, record.after)),
         conditions=_conditions(etch, record.conditions),
         clearing=in_words(record.clearing), if_not_cleared=in_words(record.if_not_cleared),
-        never=tuple(map(in_words, (*strip.sentences, *record.do_not_use_for))),
+        never=tuple(map(in_words, strip.sentences)), not_for=tuple(map(in_words, record.do_not_use_for)),
         signal=strip.signal, hazards=tuple(map(_hazard, strip.precautions)), unknown=strip.unknown,
         waste=_waste(etch, strip),
         contacts=tuple(f"{contact.term}: {contact.text}" for contact in strip.contacts),
-        columns=_columns(), version="",
+        columns=COLUMNS, version="",
     )  # fmt: skip
     return dataclasses.replace(card, version=_version(facts, etch, card))
 
@@ -125,10 +145,6 @@ def _hazard(block: PrecautionBlock) -> CardHazard:
 
 def _waste(etch: Etch, strip: SafetyStrip) -> str:
     return strip.waste if etch.waste is None else in_words(etch.waste)
-
-
-def _columns() -> tuple[str, ...]:
-    return tuple(field.name for field in dataclasses.fields(Run) if field.name not in _NOT_WRITTEN_IN)
 
 
 def _version(facts: PlanFacts, etch: Etch, card: RunCard) -> str:

@@ -216,7 +216,7 @@ def test_envelope_worked_on_paper() -> None:
 
 
 def test_the_same_fact_twice_counts_once() -> None:
-    """By hand: 40, 40 again and 90 have the middle sqrt(40 x 90) = 60; counted three times it would be 52.4."""
+    """By hand: 40, 40 again and 90 have the middle sqrt(40 x 90) = 60, not 52.4 as of three values."""
     forty, ninety = (PublishedValue(PublishedKind.VALUE, v, v, 0.25) for v in (40, 90))
     found = envelope([forty, forty, ninety], 1.645)
     assert found is not None

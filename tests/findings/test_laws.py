@@ -21,6 +21,7 @@ from builder.records.terms import Effect, Role
 from builder.views.plan_json import plan_data
 from tests.findings.worlds import (
     LEVELS,
+    Shipped,
     World,
     built_worlds,
     created,
@@ -44,7 +45,7 @@ def worlds(request: pytest.FixtureRequest) -> st.SearchStrategy[World]:
     if request.param == "built":
         return built_worlds()
     lab: PlanFacts = request.getfixturevalue("lab_facts")
-    return shipped_worlds(lab)
+    return shipped_worlds(Shipped(lab))
 
 
 @law

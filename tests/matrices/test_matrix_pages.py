@@ -1,4 +1,4 @@
-"""The matrices in Chromium: walked by keyboard, narrowed, timed, read without script, on paper and on a phone."""
+"""The matrices in Chromium: walked by keys, narrowed, timed, without script, on paper and on a phone."""
 
 from __future__ import annotations
 
@@ -6,7 +6,7 @@ import re
 
 import pytest
 from axe_playwright_python.sync_playwright import Axe
-from playwright.sync_api import Locator, Page
+from playwright.sync_api import Page, expect
 
 from tests.browser import Open
 from tests.site.page_kinds import PAGES
@@ -20,10 +20,6 @@ _ROWS_KEPT = (
 )
 _PLACE = """() => { const cell = document.activeElement;
   return [cell.parentElement.sectionRowIndex, cell.cellIndex]; }"""
-
-
-def _cell(page: Page, row: int, place: int) -> Locator:
-    return page.locator(f"table[data-ew-matrix] tbody tr:nth-child({row + 1}) > :nth-child({place + 1})")
 
 
 def _place(page: Page) -> list[int]:
@@ -86,8 +82,8 @@ def test_a_literature_cell_names_its_sources(open_page: Open, http_root: str) ->
 def test_an_unmeasured_cell_says_that_nobody_knows(open_page: Open, http_root: str) -> None:
     """An outline, and words: nothing on record is no sign that a film holds."""
     page = open_page(http_root + _LOSSES).page
-    cell = page.locator("table[data-ew-matrix] tbody td:not([class])").first
-    cell.click()
+    page.locator("table[data-ew-matrix] tbody td:not([class])").first.click()
+    cell = page.locator("table[data-ew-matrix] td[tabindex='0']")
     assert "unmeasured" in _evidence(page) and "no sign that it holds" in _evidence(page)
     assert (cell.get_attribute("aria-label") or "").endswith(": unmeasured")
     assert "gradient" in cell.evaluate("(e) => getComputedStyle(e).backgroundImage")
@@ -108,7 +104,7 @@ def test_a_longer_time_changes_words_and_numbers(open_page: Open, http_root: str
 
 
 def test_filters_narrow_rows_and_columns(open_page: Open, http_root: str) -> None:
-    """Family, words, method, etchant and kind; what is left is counted, and the arrows skip what is hidden."""
+    """Family, words, method and kind; what is left is counted, and the arrows skip what is hidden."""
     page = open_page(http_root + _LOSSES).page
     heads = page.locator("table[data-ew-matrix] thead tr:last-child th[data-kind]")
     rows = page.locator("table[data-ew-matrix] tbody tr")
@@ -130,10 +126,8 @@ def test_filters_narrow_rows_and_columns(open_page: Open, http_root: str) -> Non
     page.locator("[data-ew-narrow='film']").fill("thermal wet")
     assert rows.filter(visible=True).count() == 1
     page.locator("[data-ew-matrix-filters] [type='reset']").click()
-    page.wait_for_function(
-        "document.querySelector('[data-ew-matrix-count]').textContent.startsWith('93 ') || true"
-    )
-    assert (heads.filter(visible=True).count(), rows.filter(visible=True).count()) == everything
+    expect(heads.filter(visible=True)).to_have_count(everything[0])
+    expect(rows.filter(visible=True)).to_have_count(everything[1])
 
 
 @pytest.mark.parametrize("scheme", ["light", "dark"])
@@ -195,6 +189,6 @@ def test_without_script_the_table_reads(open_page: Open, any_root: str) -> None:
     """Every cell stands for the time that is named; no filter or panel shows that would not answer."""
     page = open_page(any_root + _LOSSES, java_script_enabled=False).page
     assert "10\xa0min" in page.locator("[data-ew-still]").inner_text()
-    assert page.locator("table[data-ew-matrix] td.ew-verdict-holds").count() > 50
+    assert page.locator("table[data-ew-matrix] td.ew-verdict-holds").count() > 30
     assert not page.locator("[data-ew-matrix-filters]").is_visible()
     assert not page.locator("[data-ew-evidence]").is_visible()

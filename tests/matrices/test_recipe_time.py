@@ -1,4 +1,4 @@
-"""The depth field of a recipe page: in Chromium the same times as the Python engine, over a table of cases."""
+"""The depth field of a recipe page: in Chromium the times of the Python engine, over a table of cases."""
 
 from __future__ import annotations
 
@@ -89,7 +89,7 @@ def test_an_empty_field_says_nothing(form: Page) -> None:
 
 
 def test_the_field_works_on_the_page(open_page: Open, any_root: str) -> None:
-    """On the built page, from a server and from a folder: the usual depth gives the big answer above the field."""
+    """On the built page, from a server and from a folder, the usual depth gives the answer above the field."""
     page = open_page(any_root + PAGES["recipe"]).page
     page.locator("[data-ew-depth-value]").fill("300")
     answer = page.locator("[data-ew-depth-answer]").inner_text()

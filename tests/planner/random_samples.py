@@ -1,4 +1,4 @@
-"""Random samples, made so that much of what a recipe knows comes up: words other than "unmeasured" are common."""
+"""Random samples, made so that much of what a recipe knows comes up and all four words are common."""
 
 from __future__ import annotations
 

@@ -1,4 +1,4 @@
-"""The planner's state: every action gives a new state and leaves the old one alone; links and files bring it back."""
+"""The planner's state: an action makes a new state; links and files bring a sample back."""
 
 from __future__ import annotations
 
@@ -121,7 +121,7 @@ def test_the_link_of_the_command_restores_the_sample(
 
 
 def test_a_link_keeps_what_is_asked(stateful: Page) -> None:
-    """Any text survives the address, with confidence and etchant; a second encoding gives the same address."""
+    """Any text survives the address, with confidence and etchant, and the command writes the same one."""
     file = {"sample": "Größe µ 晶片 & <b>#1</b>", "layers": [{**_LAYER, "role": "target"}]}
     link = stateful.evaluate("(file) => etchwright.address.encode(file, 0.95, 'bhf-5-1')", file)
     found = stateful.evaluate("(link) => etchwright.address.decode(link, data.facts)", link)

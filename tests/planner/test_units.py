@@ -27,7 +27,8 @@ _CASES: list[dict[str, Any]] = _TABLE["cases"]
 _PARSE = """([table, cases]) => cases.map((one) => {
   try {
     const found = etchwright.units.parse(etchwright.units.tableOf(table), one.text, one.dimension);
-    return {form: found.form, value: found.value, half_width: found.halfWidth, low: found.low, high: found.high, unit: found.unit};
+    const {form, value, halfWidth, low, high, unit} = found;
+    return {form, value, half_width: halfWidth, low, high, unit};
   } catch (error) {
     if (!(error instanceof etchwright.units.QuantityError)) throw error;
     return {fault: error.rule};

@@ -27,12 +27,13 @@
   }
 
   function restore() {
-    if (location.hash === written) return;
     const found = ew.address.decode(location.hash, data.facts);
     send({ type: "load", value: found.file || ew.sampleFile.empty(), confidence: found.confidence || lab, etchant: found.etchant, notices: found.notices });
   }
 
+  ew.view.begin();
   ew.viewBar.wire(data, () => state, send);
-  window.addEventListener("hashchange", restore);
+  // Only what somebody else wrote there: a link that was pasted, a step back.
+  window.addEventListener("hashchange", () => location.hash !== written && restore());
   restore();
 })((globalThis.etchwright = globalThis.etchwright || {}));

@@ -36,13 +36,18 @@
       el("p", {}, (isTimed ? "" : "Rinse at the first look, look or measure, then finish. ") + "Clears between " + time(plan.clearFirstS, "down") + " and " + time(plan.clearLastS, "up") + ". " + foundBy(shown, option)));
   }
 
+  /** @param {number} fraction */
+  function percent(fraction) {
+    return ew.numbers.plain(fraction * 100).replace(/\.?0+$/, (zeros) => (zeros.startsWith(".") ? "" : zeros)) + "\u00a0%";
+  }
+
   /** How the times were found. @param {any} shown @param {Option} option */
   function foundBy(shown, option) {
     const numbers = ew.numbers;
     const band = /** @type {Band} */ (option.targetBand);
     const rate = numbers.full(numbers.rate(band.low, band.mid, band.high));
-    return "Found from " + rate + " (" + ew.strings.rankWords(option.targetRank) + ", next run at " + Math.round(shown.state.confidence * 100) + " % confidence), unevenness " + numbers.plain(option.phi * 100) + " %" +
-      (option.offsetS ? ", offset " + numbers.plain(option.offsetS) + " s" : "") + (option.overetch ? ", overetch " + numbers.plain(option.overetch * 100) + " %" : "") + "; first look at 0.8 of the earliest clearing.";
+    return "Found from " + rate + " (" + ew.strings.rankWords(option.targetRank) + ", next run at " + Math.round(shown.state.confidence * 100) + " % confidence), unevenness " + percent(option.phi) +
+      (option.offsetS ? ", offset " + numbers.plain(option.offsetS) + " s" : "") + (option.overetch ? ", overetch " + percent(option.overetch) : "") + "; first look at 0.8 of the earliest clearing.";
   }
 
   /** @param {any} card */
@@ -65,6 +70,7 @@
     ];
     return el("section", { class: ew.hooks.cardBlock + " " + ew.hooks.cardCaution }, el("h3", {}, card.signal + ". Wear, and if it goes wrong"),
       (card.never || []).map((/** @type {string} */ words) => el("p", {}, el("strong", {}, words))),
+      (card.not_for || []).length > 0 && el("p", {}, el("strong", {}, "Not for: "), card.not_for.join("; ") + "."),
       (card.unknown || []).map((/** @type {string} */ words) => el("p", {}, words)),
       (card.hazards || []).map(one),
       el("p", {}, el("strong", {}, "Waste. "), card.waste),

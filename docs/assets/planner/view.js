@@ -85,5 +85,11 @@
     };
   }
 
-  ew.view = Object.freeze({ page, part });
+  /** What works only with scripts appears; what stands in for it goes. */
+  function begin() {
+    part("bar").hidden = part("columns").hidden = false;
+    part("without-script").remove();
+  }
+
+  ew.view = Object.freeze({ page, part, begin });
 })((globalThis.etchwright = globalThis.etchwright || {}));
