@@ -77,7 +77,9 @@ def under_by_look(band: RateBand | None, plan: Schedule, cut: Cut) -> Exposure |
     )
 
 
-def below(exposure: Exposure, band: RateBand | None, thickness_nm: float, cut: Cut, *, porous: bool) -> Exposure:
+def below(
+    exposure: Exposure, band: RateBand | None, thickness_nm: float, cut: Cut, *, porous: bool
+) -> Exposure:
     """
     Exposure of the layer below a layer that is itself exposed.
 

@@ -97,7 +97,7 @@ def schedule(band: RateBand | None, cut: Cut) -> Schedule:
 
 
 def end_mode(plan: Schedule, *, holds_by_timer: bool, endpoint: bool) -> Mode | None:
-    """Run to time when the overetch is harmless, the clearing span is narrow, or the end is seen by the tool."""
+    """Run to time when the overetch is harmless, the clearing span is narrow, or the tool sees the end."""
     if plan.clear_first_s is None or plan.clear_last_s is None:
         return None
     narrow = plan.clear_first_s > 0 and plan.clear_last_s <= TIMED_RATIO * plan.clear_first_s

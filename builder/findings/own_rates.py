@@ -87,7 +87,7 @@ class OwnRate:
 
 
 def own_rate(records: LabRecords, etch: Etch, film: str, confidence: float | None = None) -> OwnRate | None:
-    """Return what the recipe's runs say of a film at the lab's confidence, or None if it has no runs of it."""
+    """Return what the recipe's runs say of a film at the lab's confidence; None if it has no runs of it."""
     rows = [run for run in records.runs.get(etch.id, ()) if run.film == film]
     if not rows:
         return None

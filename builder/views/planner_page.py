@@ -12,6 +12,7 @@ DATA_URL = "planner/facts.js"
 SCRIPTS = (
     "units",
     "data",
+    "model-published",
     "model-evidence",
     "model-times",
     "model-words",

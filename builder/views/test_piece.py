@@ -16,12 +16,12 @@ TEST_S = 600.0
 
 
 def needs_test_piece(row: FilmRow) -> bool:
-    """Tell whether a measurement of the film would settle its word: what is not stated is settled by stating it."""
+    """Tell whether a measurement of the film would settle its word; what is not stated needs none."""
     return not row.rank.can_hold or row.ground in _SETTLED_BY_TEST
 
 
 def test_time_s(row: FilmRow) -> float:
-    """Return how long a test piece should stay in: ten minutes, or the film's worst exposure if that is shorter."""
+    """Return how long a test piece should stay in: ten minutes, or the worst exposure if that is shorter."""
     if row.exposure is None or row.exposure.high_s <= 0:
         return TEST_S
     return min(TEST_S, row.exposure.high_s)

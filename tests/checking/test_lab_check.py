@@ -164,3 +164,16 @@ def test_no_record_ends_in_a_traceback(file: RawFile, chance: random.Random, odd
     changed = shape(RawFile(file.kind, file.id, file.origin, raw), SCHEMAS)
     records, problems = check_records([*others, changed], as_of=AS_OF)
     assert records is not None or problems
+
+
+@pytest.mark.parametrize("name", ["hf-49", "acetone", "h2so4-96", "bcl3"])
+def test_a_broken_chemical_is_one_problem_and_no_traceback(name: str) -> None:
+    """Rules that follow parts into chemicals do without the records that name it."""
+    files = read_lab(EXAMPLES / "lab", columns=SCHEMAS.run_columns()).files
+    broken = next(file for file in files if (str(file.kind), file.id) == ("chemicals", name))
+    raw = Raw({**broken.raw.data, "h_codes": 3}, broken.raw.positions, broken.raw.file)  # type: ignore[dict-item]
+    changed = RawFile(broken.kind, broken.id, broken.origin, raw)
+    shaped = [shape(changed if file is broken else file, SCHEMAS) for file in files]
+    records, problems = check_records(shaped, as_of=AS_OF)
+    assert records is None
+    assert [(problem.file, problem.rule) for problem in problems] == [(broken.raw.file, "wrong-type")]

@@ -89,7 +89,7 @@ def test_an_empty_field_says_nothing(form: Page) -> None:
 
 
 def test_the_field_works_on_the_page(open_page: Open, any_root: str) -> None:
-    """On the built page, from a server and from a folder, the usual depth gives the answer above the field."""
+    """On the built page, from a server and a folder, the usual depth gives the answer above the field."""
     page = open_page(any_root + PAGES["recipe"]).page
     page.locator("[data-ew-depth-value]").fill("300")
     answer = page.locator("[data-ew-depth-answer]").inner_text()

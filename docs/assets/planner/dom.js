@@ -17,10 +17,15 @@
     }
   }
 
+  /** What may stand inside an element; text as people read it. @param {any[]} children @returns {(Node | string)[]} */
+  function readable(children) {
+    return children.flat(Infinity).filter(Boolean).map((child) => (typeof child === "string" ? ew.numbers.inWords(child) : child));
+  }
+
   /** An element with attributes (`class`, `onclick` as a function) and children. @param {string} tag @param {{[name: string]: any}} [given] @param {...(Child | Child[])} children @returns {any} */
   function el(tag, given, ...children) {
     const element = document.createElement(tag);
-    element.append(.../** @type {(Node | string)[]} */ (/** @type {any[]} */ (children).flat(Infinity).filter(Boolean)));
+    element.append(...readable(children));
     give(element, given || {});
     return element;
   }
@@ -28,7 +33,7 @@
   /** @param {string} tag @param {{[name: string]: any}} [given] @param {...(Child | Child[])} children @returns {any} */
   function svg(tag, given, ...children) {
     const element = document.createElementNS(SVG, tag);
-    element.append(.../** @type {(Node | string)[]} */ (/** @type {any[]} */ (children).flat(Infinity).filter(Boolean)));
+    element.append(...readable(children));
     give(element, given || {});
     return element;
   }
@@ -55,7 +60,7 @@
   /** Puts new content into an element and gives the focus back to what had it. @param {Element} element @param {...(Child | Child[])} children */
   function fill(element, ...children) {
     const focused = document.activeElement && element.contains(document.activeElement) ? document.activeElement.id : "";
-    element.replaceChildren(.../** @type {(Node | string)[]} */ (/** @type {any[]} */ (children).flat(Infinity).filter(Boolean)));
+    element.replaceChildren(...readable(children));
     const again = focused ? document.getElementById(focused) : null;
     if (again) again.focus({ preventScroll: true });
   }

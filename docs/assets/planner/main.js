@@ -16,19 +16,18 @@
     state = ew.state.after(state, action);
     clearTimeout(timer);
     // Browsers count how often the address changes; once typing pauses is enough.
-    timer = window.setTimeout(write, PAUSE_MS);
+    if (!action.fromAddress) timer = window.setTimeout(write, PAUSE_MS);
     show(state, action.focus);
   }
 
   function write() {
-    if (!location.hash && !state.file.layers.length) return;
     written = ew.address.encode(state.file, state.confidence === lab ? null : state.confidence, state.etchant);
     history.replaceState(null, "", written);
   }
 
   function restore() {
     const found = ew.address.decode(location.hash, data.facts);
-    send({ type: "load", value: found.file || ew.sampleFile.empty(), confidence: found.confidence || lab, etchant: found.etchant, notices: found.notices });
+    send({ type: "load", fromAddress: true, value: found.file || ew.sampleFile.empty(), confidence: found.confidence || lab, etchant: found.etchant, notices: found.notices });
   }
 
   ew.view.begin();

@@ -148,7 +148,7 @@
     return isIsotropic(reach) ? { low: assumed, mid: assumed, high: assumed } : ew.times.UNKNOWN_SPAN;
   }
 
-  /** @param {Facts} facts @param {number} value @param {Range} runs */
+  /** @param {Facts} facts @param {number} value @param {Extent} runs */
   function isOutsideRuns(facts, value, runs) {
     const [least, most] = facts.rules.run_span;
     return !(least * runs.low <= value && value <= most * runs.high);

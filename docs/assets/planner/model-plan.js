@@ -8,7 +8,7 @@
 
   const WORKS_ON_RESIST = new Set(["develop", "strip", "rework"]);
 
-  /** @param {number} confidence @param {Range | null} temperature @returns {Asked} */
+  /** @param {number} confidence @param {Extent | null} temperature @returns {Asked} */
   function asking(confidence, temperature) {
     const at = temperature ? temperature.low + ".." + temperature.high : "";
     return { confidence: confidence, temperature: temperature, key: confidence + "@" + at };
@@ -60,7 +60,7 @@
     if (recipe.status === "retired") return remark("retired");
     const refused = ew.evidence.at(facts.refused, recipe.tool) || {};
     // The order of listing is no reason.
-    const exposed = sample.exposed.slice().sort((one, other) => ew.couples.byCode(one.film, other.film));
+    const exposed = sample.exposed.slice().sort((/** @type {PlanFilm} */ one, /** @type {PlanFilm} */ other) => ew.couples.byCode(one.film, other.film));
     for (const film of [...sample.layers, ...exposed, ...(sample.back ? [sample.back] : [])]) {
       const words = ew.evidence.at(refused, film.film);
       if (words !== undefined) return remark("tool-refuses", { film: film.film, words: words });
@@ -82,7 +82,7 @@
   function reasonOfSafety(facts, etching, sample) {
     const recipe = /** @type {EtchFacts} */ (etching.recipe);
     if (recipe.forbidden.length) return ew.films.remark("safety", { words: recipe.forbidden[0] });
-    const fact = ew.option.gasFacts(facts, etching, sample).find((one) => one.forbidden);
+    const fact = ew.option.gasFacts(facts, etching, sample).find((/** @type {GasFact} */ one) => one.forbidden);
     return fact ? ew.films.remark("safety", { words: fact.words }) : null;
   }
 

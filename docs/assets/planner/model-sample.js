@@ -20,7 +20,7 @@
     return rounded(ew.units.parse(facts.units, text, dimension).value);
   }
 
-  /** @param {Facts} facts @param {any} text @returns {Range | null} */
+  /** @param {Facts} facts @param {any} text @returns {Extent | null} */
   function temperature(facts, text) {
     if (text === undefined || text === null) return null;
     if (text === ROOM) return { low: rounded(facts.rules.room_temperature_k[0]), high: rounded(facts.rules.room_temperature_k[1]) };

@@ -162,5 +162,12 @@
     return value === 0 ? "0" : placed(value, MOST - 1 - exponent(value), "nearest");
   }
 
-  ew.numbers = Object.freeze({ length, rate, withUnit, full, plainLength, time, temperature, plain, UNKNOWN });
+  /** Running text with the signs of units as people read them: "at 80 degC" is "at 80 °C". @param {string} text */
+  function inWords(text) {
+    const read = { degC: "°C", um: "µm", μm: "µm" };
+    // Only right after a number: "um" alone is a word of other languages.
+    return text.replace(/(?<=\d)[ \u00a0](degC|um|μm)\b/g, (_whole, unit) => NO_BREAK + read[/** @type {keyof typeof read} */ (unit)]);
+  }
+
+  ew.numbers = Object.freeze({ length, rate, withUnit, full, plainLength, time, temperature, plain, inWords, UNKNOWN });
 })((globalThis.etchwright = globalThis.etchwright || {}));

@@ -22,7 +22,7 @@
       report(c, field, found.form === "value" ? '"' + text + '" must be more than zero' : '"' + text + '": give a single number with its unit');
     } catch (error) {
       if (!(error instanceof ew.units.QuantityError)) throw error;
-      report(c, field, error.message);
+      report(c, field, /** @type {Error} */ (error).message);
     }
     return null;
   }

@@ -1,19 +1,19 @@
 // @ts-check
-/*
+/**
  * The shapes that the planner's scripts pass to each other, for whoever checks them with TypeScript. No page
  * loads this file. Records keep the names they arrive with; what is computed has names of ours.
  *
- * @typedef {{low: number, high: number}} Range
+ * @typedef {{low: number, high: number}} Extent
  * @typedef {{low: number, mid: number | null, high: number | null}} Band nm/s
  * @typedef {{low: number | null, mid: number | null, high: number | null}} Span
- * @typedef {{kind: string, low: number | null, high: number | null, sigma: number, rank: string, source: string, tested_s: number | null, temperature: Range | null, per_cycle: boolean}} PublishedFact
- * @typedef {{effect: string, words: string, source: string, temperature: Range | null}} SaidFact
+ * @typedef {{kind: string, low: number | null, high: number | null, sigma: number, rank: string, source: string, tested_s: number | null, temperature: Extent | null, per_cycle: boolean}} PublishedFact
+ * @typedef {{effect: string, words: string, source: string, temperature: Extent | null}} SaidFact
  * @typedef {{confidence: number, low: number, mid: number | null, high: number}} LevelBand
- * @typedef {{levels: LevelBand[], runs: number, limits: number, times: Range, limit_s: number | null, temperature: Range | null, load_cm2: Range | null, induction_s: number | null}} OwnFact
+ * @typedef {{levels: LevelBand[], runs: number, limits: number, times: Range, limit_s: number | null, temperature: Extent | null, load_cm2: Extent | null, induction_s: number | null}} OwnFact
  * @typedef {{forbidden: boolean, words: string, from_nm: number}} GasFact
- * @typedef {{id: string, name: string, method: string, state: string, isotropic: boolean, gas_bubbles: boolean, hf_vapour: boolean, temperature: Range | null, hazard: number, cautions: string[], rows: {[film: string]: PublishedFact[]}, said: {[film: string]: SaidFact[]}, gas: {[film: string]: GasFact[]}, alone: {[film: string]: GasFact[]}, bond: GasFact[]}} EtchantFacts
+ * @typedef {{id: string, name: string, method: string, state: string, isotropic: boolean, gas_bubbles: boolean, hf_vapour: boolean, temperature: Extent | null, hazard: number, cautions: string[], rows: {[film: string]: PublishedFact[]}, said: {[film: string]: SaidFact[]}, gas: {[film: string]: GasFact[]}, alone: {[film: string]: GasFact[]}, bond: GasFact[]}} EtchantFacts
  * @typedef {{film: string, on: string[], longest_s: number}} MaskFact
- * @typedef {{id: string, name: string, etchant: string, method: string, tool: string, status: string, inherits: boolean, targets: string[], phi: number, offset_s: number, transfer_s: number, overetch: number, endpoint: boolean, cooled: boolean, isotropic: boolean, temperature: Range | null, cycle_s: number | null, ratio: Span | null, masks: MaskFact[], own: {[film: string]: OwnFact}, gas: {[film: string]: GasFact[]}, forbidden: string[], cautions: string[], clearing: string, if_not_cleared: string}} EtchFacts
+ * @typedef {{id: string, name: string, etchant: string, method: string, tool: string, status: string, inherits: boolean, targets: string[], phi: number, offset_s: number, transfer_s: number, overetch: number, endpoint: boolean, cooled: boolean, isotropic: boolean, temperature: Extent | null, cycle_s: number | null, ratio: Span | null, masks: MaskFact[], own: {[film: string]: OwnFact}, gas: {[film: string]: GasFact[]}, forbidden: string[], cautions: string[], clearing: string, if_not_cleared: string}} EtchFacts
  * @typedef {{id: string, name: string, family: string, is_family: boolean, members: string[], barrier: string, electrical: string | null, noble: boolean, similar: string[], adhesion: string[], names: string[], formula: string}} FilmFacts
  * @typedef {{films: string[], etchants: string[], effect: string, words: string, source: string, affects: string | null}} CoupleFact
  * @typedef {{rule: string, forbidden: boolean, words: string, pairs: string[][]}} MeetingFact
@@ -28,11 +28,11 @@
  * @typedef {{format: number, as_of: string, defaults: Defaults, films: {[id: string]: FilmFacts}, etchants: {[id: string]: EtchantFacts}, etches: {[id: string]: EtchFacts}, refused: {[tool: string]: {[film: string]: string}}, couples: CoupleFact[], meetings: MeetingFact[], bondPattern: RegExp | null, families: FilmFacts[], etchings: Etching[], alone: Map<string, Etching>, tools: Map<string, string>, rules: Rules, quantiles: {confidence: number, quantile: number}[], units: UnitTable}} Facts
  * @typedef {{facts: Facts, reference: Facts, cards: {[recipe: string]: any}, samples: any[], sources: {[id: string]: string}, lab: string}} PlannerData
  *
- * @typedef {{confidence: number, temperature: Range | null, key: string}} Asked `key` names the question
+ * @typedef {{confidence: number, temperature: Extent | null, key: string}} Asked `key` names the question
  * @typedef {{rank: string, band: Band | null, limitS: number | null, attacked: boolean, adverse: string[], conflict: boolean, single: boolean, far: boolean, allTemperatures: boolean, hint: string | null, sources: string[], words: string[]}} Evidence
  * @typedef {{film: string, thicknessNm: number, role: string, tolerance: number, allowedNm: number | null, on: string | null, isCritical: boolean, exposed: string, spentNm: number | null, assumed: boolean}} PlanFilm
- * @typedef {{name: string, layers: PlanFilm[], exposed: PlanFilm[], back: PlanFilm | null, backProtected: boolean, edge: string | null, depthNm: number | null, throughWafer: boolean, lineNm: number | null, loadCm2: number | null, methods: string[], tools: string[], etchants: string[], hottestK: number | null, carrier: string | null, bond: string | null, temperature: Range | null}} PlanSample
- * @typedef {{treat: string | null, etch: string | null, etchant: string | null, timeS: number | null, temperature: Range | null}} PlanStep
+ * @typedef {{name: string, layers: PlanFilm[], exposed: PlanFilm[], back: PlanFilm | null, backProtected: boolean, edge: string | null, depthNm: number | null, throughWafer: boolean, lineNm: number | null, loadCm2: number | null, methods: string[], tools: string[], etchants: string[], hottestK: number | null, carrier: string | null, bond: string | null, temperature: Extent | null}} PlanSample
+ * @typedef {{treat: string | null, etch: string | null, etchant: string | null, timeS: number | null, temperature: Extent | null}} PlanStep
  * @typedef {{sample: PlanSample, target: PlanFilm, above: PlanFilm[], below: PlanFilm[]}} Stage
  * @typedef {{sample: PlanSample, removed: number, wetWith: string | null}} PlanState
  * @typedef {{depthNm: number, thicknessNm: number, tolerance: number, phi: number, offsetS: number, overetch: number, reactionS: number, through: boolean}} Cut

@@ -66,7 +66,8 @@
   /** @param {any} shown @param {StagePlan} stage @param {boolean} spoken */
   function stageWords(shown, stage, spoken) {
     const named = ew.viewOption.named(shown);
-    const aim = stage.target ? named(stage.target) : stage.treat + (stage.etchant ? " in " + named(stage.etchant) : "");
+    const aim = stage.target ? named(stage.target) : stage.treat;
+    if (stage.treat && stage.options[0]) return stage.step + ". " + ew.strings.capital(stage.treat) + ": " + stage.options[0].verdict + ".";
     const start = shown.plan.isSequence ? stage.step + ". " + ew.strings.capital(aim) + ": " : "";
     const option = stage.options[0];
     if (!option) return stage.treat && !stage.etchant ? "" : start + "nothing on record removes " + aim + " on this sample.";

@@ -38,7 +38,7 @@
 
   /** @param {number} fraction */
   function percent(fraction) {
-    return ew.numbers.plain(fraction * 100).replace(/\.?0+$/, (zeros) => (zeros.startsWith(".") ? "" : zeros)) + "\u00a0%";
+    return ew.numbers.plain(fraction * 100).replace(/\.?0+$/, (/** @type {string} */ zeros) => (zeros.startsWith(".") ? "" : zeros)) + "\u00a0%";
   }
 
   /** How the times were found. @param {any} shown @param {Option} option */

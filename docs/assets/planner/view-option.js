@@ -8,7 +8,8 @@
   /** What an option is called. @param {any} shown @param {Option} option */
   function nameOf(shown, option) {
     const facts = shown.data.facts;
-    return option.recipe ? facts.etches[option.recipe].name : facts.etchants[option.etchant].name + ", alone";
+    if (option.recipe) return facts.etches[option.recipe].name;
+    return facts.etchants[option.etchant].name + (option.target === null ? "" : ", alone");
   }
 
   /** When to look and stop, in words. @param {Option} option */

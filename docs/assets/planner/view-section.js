@@ -81,10 +81,10 @@
     if (!layers.length) return null;
     const placed = ew.section.place(layers, TOP - 12);
     const width = ew.section.WIDTH;
-    const spreadLabels = spread(placed, (one) => [one.layer.name, (one.layer.thickness || "how thick?") + (one.toScale || one.isCut ? "" : " (not to scale)")]);
+    const spreadLabels = spread(placed, (/** @type {any} */ one) => [one.layer.name, (one.layer.thickness || "how thick?") + (one.toScale || one.isCut ? "" : " (not to scale)")]);
     const words = layers.map((layer) => layer.name + ", " + (layer.thickness || "thickness not given") + ", " + layer.role);
     return svg("svg", { class: "ew-section", viewBox: "0 0 400 " + heightOf(placed, spreadLabels), role: "img", "aria-label": "Your sample in section, from the top: " + words.join("; ") },
-      placed.flatMap((one) => shapes(one, ew.section.before(one, one.layer.role === "mask"))),
+      placed.flatMap((/** @type {any} */ one) => shapes(one, ew.section.before(one, one.layer.role === "mask"))),
       breaks(placed, 0),
       labels(spreadLabels, width));
   }
@@ -100,12 +100,12 @@
     const placed = ew.section.place(layers, TOP);
     const second = ew.section.WIDTH + GAP;
     const isMask = (/** @type {any} */ one) => one.layer.role === "mask";
-    const spreadLabels = spread(placed, (one) => [one.layer.name, one.layer.remark]);
+    const spreadLabels = spread(placed, (/** @type {any} */ one) => [one.layer.name, one.layer.remark]);
     return svg("svg", { class: "ew-section", viewBox: "0 0 520 " + heightOf(placed, spreadLabels), role: "img", "aria-label": description },
       panelName(0, "before"), panelName(second, "after, at worst"),
-      placed.flatMap((one) => shapes(one, ew.section.before(one, isMask(one)))),
+      placed.flatMap((/** @type {any} */ one) => shapes(one, ew.section.before(one, isMask(one)))),
       svg("g", { transform: "translate(" + second + " 0)" },
-        placed.flatMap((one) => shapes(one, ew.section.after(one, isMask(one), undercutRatio)))),
+        placed.flatMap((/** @type {any} */ one) => shapes(one, ew.section.after(one, isMask(one), undercutRatio)))),
       breaks(placed, 0), breaks(placed, second),
       labels(spreadLabels, second + ew.section.WIDTH));
   }

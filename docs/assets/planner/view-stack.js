@@ -62,7 +62,7 @@
       el("div", { class: hooks.fields },
         fields.named(shown, "Film", field + "/film", shown.entries, { placeholder: "oxide, Si3N4, Al …", kind: hooks.wide }),
         fields.text(shown, "Thickness", field + "/thickness", { placeholder: "500 nm +/- 10 nm", kind: hooks.narrow }),
-        fields.labelled("Role", field + "/role", fields.select(layer.role, ROLES, (value) => shown.send({ type: "set", field: field + "/role", value: value, rebuild: true })), hooks.narrow),
+        fields.labelled("Role", field + "/role", fields.select(layer.role, ROLES, (/** @type {string} */ value) => shown.send({ type: "set", field: field + "/role", value: value, rebuild: true })), hooks.narrow),
         itemButtons(shown, "layers", index, shown.state.file.layers.length, name, true)),
       !isTarget && fewFields(shown, field, layer, false));
   }
