@@ -5,13 +5,12 @@ from __future__ import annotations
 from collections.abc import Iterator
 
 from builder.checking.rule import Checked, Fault, Rule
+from builder.engine.plan_rules import CLEAR_GAIN
 from builder.problems import Severity
 from builder.records.runs import Run
 from builder.records.terms import Status
 
 _ABSOLUTE_ZERO_DEGC = -273.15
-_CLEAR_GAIN = 5.0
-"""Growth beyond this many standard uncertainties of the difference is no scatter. Common practice."""
 
 
 def _runs(checked: Checked) -> Iterator[Run]:
@@ -67,9 +66,10 @@ def _repeats(checked: Checked) -> Iterator[Fault]:
 def _gains(checked: Checked) -> Iterator[Fault]:
     for run in _runs(checked):
         gain = run.after_nm - run.before_nm
-        if gain > _CLEAR_GAIN * 2**0.5 * run.u_nm:
+        if gain > CLEAR_GAIN * 2**0.5 * run.u_nm:
             words = f"the film is {gain:g} nm thicker after the etch"
-            yield Fault(run.file, f"{run.pointer}/after_nm", words, "are before and after exchanged?")
+            hint = "are before and after exchanged? The run does not count"
+            yield Fault(run.file, f"{run.pointer}/after_nm", words, hint)
 
 
 def _future(checked: Checked) -> Iterator[Fault]:

@@ -17,6 +17,9 @@ GOOD_MARGIN = 2.0
 RUN_SPAN = (0.5, 2.0)
 """A value asked for outside these multiples of what the runs covered is flagged."""
 
+CLEAR_GAIN = 5.0
+"""Growth beyond this many standard uncertainties of the loss is no scatter (common practice, no source)."""
+
 TEMPERATURE_MATCH_K = 3.0
 """A published row counts for a bath within this many kelvin of its own temperature."""
 

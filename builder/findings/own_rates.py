@@ -21,7 +21,7 @@ from builder.engine import (
     rate_of_line,
     run_rate,
 )
-from builder.engine.plan_rules import RUN_SPAN
+from builder.engine.plan_rules import CLEAR_GAIN, RUN_SPAN
 from builder.findings.spread_groups import spread_group, spread_in_force
 from builder.records.etches import Etch
 from builder.records.lab import LabRecords
@@ -155,8 +155,13 @@ def _rate_of(wafer: Sequence[Run], induction_s: float) -> tuple[RunRate, LineFit
         depths = [row.before_nm - row.after_nm for row in wafer]
         weights = None if min(uncertainties) == 0 else uncertainties
         fit = fit_line(times, depths, weights)
+        if -fit.slope_nm_per_s > CLEAR_GAIN * fit.u_slope_nm_per_s:
+            return RunRate(None), fit
         return rate_of_line(fit, max(times)), fit
     longest = max(wafer, key=lambda row: row.time_s)
+    if longest.after_nm - longest.before_nm > CLEAR_GAIN * math.hypot(longest.u_nm, longest.u_nm):
+        # A film that grew, or a row with its readings exchanged, is no sign that nothing was lost.
+        return RunRate(None), None
     try:
         rate = run_rate(
             longest.before_nm, longest.after_nm, longest.time_s, longest.u_nm, longest.u_nm, induction_s

@@ -52,9 +52,11 @@ def row_after(computed: Computed, etching: Etching, film: str, time_s: float | N
     fixed = UNKNOWN_SCHEDULE
     if time_s is not None:
         fixed = Schedule(time_s, time_s, time_s, None, time_s, None, None, None)
-    # The time is set, not computed: no target's rate makes it less sure. So a published number of a
-    # chamber that has no own run is still capped, by the film's own rank.
-    rank = Rank.OWN if etching.recipe is not None else Rank.LITERATURE
+    # The time is set, not computed: no target's rate makes it less sure. But a published number of a
+    # chamber in which no own run has removed a target stays capped.
+    recipe = etching.recipe
+    has_run = recipe is not None and any(target in recipe.own for target in recipe.targets)
+    rank = Rank.OWN if has_run else Rank.LITERATURE
     return _row(computed, facts, etching, Timing(None, cut, fixed), film, film, Role.EXPOSED, rank)
 
 

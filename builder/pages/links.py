@@ -3,16 +3,17 @@
 from __future__ import annotations
 
 import posixpath
+from collections import Counter
 from collections.abc import Iterator
-from dataclasses import dataclass, field
-from html.parser import HTMLParser
+from dataclasses import dataclass
 from pathlib import Path
 from urllib.parse import unquote, urlsplit
 
+from builder.pages.start_tags import start_tags
 from builder.problems import Problem, Severity, sorted_problems
 
 _ALLOWED_SCHEMES = frozenset({"https", "mailto"})
-_LINK_ATTRIBUTES = frozenset({"href", "src", "action", "poster", "data"})
+_LINK_ATTRIBUTES = frozenset({"href", "src", "action", "poster", "data", "xlink:href"})
 _DOI = "https://doi.org/"
 
 
@@ -53,45 +54,41 @@ def check_links(site_dir: Path) -> list[Problem]:
     return sorted_problems(found)
 
 
-@dataclass
-class _Content(HTMLParser):
-    """The anchors and links of one page."""
+@dataclass(frozen=True)
+class _Content:
+    """The anchors and links of one page; a link has its tag, its address and its place in the text."""
 
-    anchors: set[str] = field(default_factory=set)
-    repeated: set[str] = field(default_factory=set)
-    links: list[tuple[str, str, int, int]] = field(default_factory=list)
+    text: str
+    anchors: frozenset[str]
+    repeated: frozenset[str]
+    links: tuple[tuple[str, str, int], ...]
 
-    def __post_init__(self) -> None:
-        super().__init__(convert_charrefs=True)
-
-    def handle_starttag(self, tag: str, attrs: list[tuple[str, str | None]]) -> None:
-        line, column = self.getpos()
-        for name, value in attrs:
-            if value is None:
-                continue
-            if name == "id":
-                (self.repeated if value in self.anchors else self.anchors).add(value)
-            elif name in _LINK_ATTRIBUTES or name == "xlink:href":
-                self.links.append((tag, value, line, column + 1))
-
-    def __hash__(self) -> int:
-        return id(self)
+    def line_and_column(self, offset: int) -> tuple[int, int]:
+        """Where a place in the text is, for people."""
+        return self.text.count("\n", 0, offset) + 1, offset - self.text.rfind("\n", 0, offset)
 
 
 def _read(path: Path) -> _Content:
-    content = _Content()
-    content.feed(path.read_text(encoding="utf-8"))
-    content.close()
-    return content
+    text = path.read_text(encoding="utf-8")
+    anchors: Counter[str] = Counter()
+    links: list[tuple[str, str, int]] = []
+    for tag in start_tags(text):
+        for name, value in tag.attributes:
+            if name == "id":
+                anchors[value] += 1
+            elif name in _LINK_ATTRIBUTES:
+                links.append((tag.name, value, tag.offset))
+    repeated = frozenset(anchor for anchor, count in anchors.items() if count > 1)
+    return _Content(text, frozenset(anchors), repeated, tuple(links))
 
 
 def _dead_links(page: str, content: _Content, read: dict[str, _Content], site_dir: Path) -> Iterator[Problem]:
     for anchor in sorted(content.repeated):
         yield _problem(page, 1, 1, "repeated-anchor", f'the anchor "{anchor}" stands twice')
-    for tag, link, line, column in content.links:
+    for tag, link, offset in content.links:
         fault = _fault(page, tag, link, read, site_dir)
         if fault is not None:
-            yield _problem(page, line, column, *fault)
+            yield _problem(page, *content.line_and_column(offset), *fault)
 
 
 def _fault(

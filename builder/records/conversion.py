@@ -8,7 +8,7 @@ import enum
 import functools
 import types
 import typing
-from collections.abc import Callable, Mapping, Sequence
+from collections.abc import Callable, Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from typing import Annotated, TypeAlias, TypeVar
 
@@ -68,6 +68,10 @@ SETTING_DIMENSIONS = (
 )
 """What a setting of a tool may measure; a unit that two of them share means the first."""
 Setting: TypeAlias = Annotated[Quantity, SETTING_DIMENSIONS]
+
+
+LATER = "later"
+"""Marks a mapping whose values are made when they are asked for: most are never asked for."""
 
 
 def from_data(cls: type[T], data: Data, **given: object) -> T:
@@ -135,6 +139,9 @@ def _key(hint: object, name: str) -> str:
 def _converter(hint: object, dimensions: tuple[Dimension, ...]) -> _Convert:
     origin = typing.get_origin(hint)
     arguments = typing.get_args(hint)
+    if origin is Annotated and LATER in arguments[1:]:
+        values = typing.get_args(arguments[0])[1]
+        return functools.partial(_Later, _converter(values, ()))
     if origin is Annotated:
         return _converter(arguments[0], dimensions + _dimensions(arguments[1:]))
     if origin in (typing.Union, types.UnionType):
@@ -194,3 +201,26 @@ def _as_tuple(convert: _Convert, values: object) -> tuple[object, ...]:
 def _as_mapping(convert: _Convert, values: object) -> dict[str, object]:
     assert isinstance(values, Mapping)
     return {str(name): convert(value) for name, value in values.items()}
+
+
+class _Later(Mapping[str, object]):
+    """A mapping of data that makes each value at its first use."""
+
+    def __init__(self, convert: _Convert, values: object) -> None:
+        assert isinstance(values, Mapping)
+        self._convert, self._values = convert, values
+        self._made: dict[str, object] = {}
+
+    def __getitem__(self, key: str) -> object:
+        if key not in self._made:
+            self._made[key] = self._convert(self._values[key])
+        return self._made[key]
+
+    def __iter__(self) -> Iterator[str]:
+        return iter(self._values)
+
+    def __len__(self) -> int:
+        return len(self._values)
+
+    def __contains__(self, key: object) -> bool:
+        return key in self._values

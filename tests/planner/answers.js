@@ -18,6 +18,7 @@
         one.allowedNm === Infinity ? "any" : one.allowedNm, one.spentNm === Infinity ? "infinite" : one.spentNm,
       ],
       reason: ew.strings.reason(one, asIs),
+      test: ew.strings.testPieceWords(one, ew.family(one.film), asIs),
     };
   }
 
@@ -50,6 +51,7 @@
   ew.answers = function (data, cases) {
     return cases.map(function (given) {
       const facts = given.etchant ? data.reference : data.facts;
+      ew.family = (film) => facts.films[film].family;
       const sample = ew.sample.planSample(facts, given.sample);
       const steps = ew.sample.planSteps(facts, given.sample);
       return ew.planning.plan(facts, sample, steps, given.confidence, given.etchant).stages.map(stage);

@@ -3,17 +3,18 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Iterator, Sequence
+from collections.abc import Iterator, Mapping, Sequence
 from typing import Any
 
 from builder.engine import RateBand, Schedule, Span
-from builder.findings.plan.facts import PlanFacts
+from builder.findings.plan.facts import FilmFacts, PlanFacts
 from builder.findings.plan.planning import plan
 from builder.findings.plan.result import FilmRow, Option, Remark, StagePlan
 from builder.findings.plan.sample import plan_sample
 from builder.records.samples import Sample
 from builder.records.terms import Origin
 from builder.views.plan_words import blocker, excluded_words, note_words, reason
+from builder.views.test_piece import needs_test_piece, test_piece_words
 from tests.planner.random_samples import Case
 
 # Plain data that a browser can give too.
@@ -29,20 +30,20 @@ def _answer(facts: PlanFacts, case: Case) -> Answer:
     sample = Sample.from_raw(case.sample, "random.json", Origin.LAB)
     seen = plan_sample(sample, facts.defaults)
     planned = plan(facts, seen, sample.steps, confidence=case.confidence, etchant=case.etchant)
-    return [_stage(stage) for stage in planned.stages]
+    return [_stage(stage, facts.films) for stage in planned.stages]
 
 
-def _stage(stage: StagePlan) -> Answer:
+def _stage(stage: StagePlan, films: Mapping[str, FilmFacts]) -> Answer:
     return {
         "step": stage.step,
         "target": stage.target,
         "treat": stage.treat,
-        "options": [_option(option) for option in stage.options],
+        "options": [_option(option, films) for option in stage.options],
         "excluded": [[one.recipe, one.etchant, excluded_words(one.reason)] for one in stage.excluded],
     }
 
 
-def _option(option: Option) -> Answer:
+def _option(option: Option, films: Mapping[str, FilmFacts]) -> Answer:
     return {
         "recipe": option.recipe,
         "etchant": option.etchant,
@@ -56,14 +57,14 @@ def _option(option: Option) -> Answer:
             option.offset_s,
             option.overetch,
         ],
-        "rows": [_row(row) for row in option.rows],
+        "rows": [_row(row, films) for row in option.rows],
         "blocker": blocker(option),
         "notes": [note_words(note) for note in option.notes],
         "unstated": _codes(option.unstated),
     }
 
 
-def _row(row: FilmRow) -> Answer:
+def _row(row: FilmRow, films: Mapping[str, FilmFacts]) -> Answer:
     allowed = row.allowed_nm
     return {
         "film": [row.film, row.role, row.rank, row.hint, list(row.effects)],
@@ -78,6 +79,7 @@ def _row(row: FilmRow) -> Answer:
             _finite(row.spent_nm),
         ],
         "reason": reason(row),
+        "test": test_piece_words(row, films[row.film].family) if needs_test_piece(row) else "",
     }
 
 

@@ -49,8 +49,7 @@ class _Maker:
     def __init__(self, facts: PlanFacts, source: random.Random) -> None:
         self.facts = facts
         self.random = source
-        # A sample that names a family of films is refused before it is planned.
-        self.films = sorted(id for id, film in facts.films.items() if not film.is_family)
+        self.films = sorted(facts.films)
         self.etches = sorted(facts.etches)
         self.tools = sorted({etch.tool for etch in facts.etches.values()})
         self.etchants = sorted(facts.etchants)

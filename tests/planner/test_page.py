@@ -81,7 +81,7 @@ def test_a_stack_is_built_by_keyboard(open_page: Open, http_root: str) -> None:
 
     add("positive resist a", "1.4 um")
     add("wet thermal ox", "5000 A")
-    add("silicon (100)", "525 um")
+    add("si-100", "525 um")
     roles = [page.locator(f"#plan-layers-{index}-role") for index in range(3)]
     assert [role.input_value() for role in roles] == ["mask", "target", "under"]
     films = [page.locator(f"#plan-layers-{index}-film").input_value() for index in range(3)]

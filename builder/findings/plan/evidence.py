@@ -157,7 +157,7 @@ def _of_film(facts: PlanFacts, etching: Etching, film: FilmFacts, asked: Asked) 
     counting = [row for row in rows if matches(row.temperature, temperature)]
     said = _said(etching, film.id, temperature)
     own = etching.own(film.id)
-    far = own is not None and not _was_run_at(own, asked.temperature_k)
+    far = own is not None and not _was_run_at(own, etching.temperature, asked.temperature_k)
     best = _best_published(counting, asked.confidence)
     if own is not None and not far:
         base = _from_own(own, best, counting, asked)
@@ -211,12 +211,15 @@ def _said(etching: Etching, film: str, temperature: Span | None) -> list[SaidFac
     return facts
 
 
-def _was_run_at(own: OwnFact, asked: Span | None) -> bool:
-    if asked is None or own.temperature is None:
-        return True
+def _was_run_at(own: OwnFact, recipe: Span | None, asked: Span | None) -> bool:
+    """Runs without a temperature were made at the recipe's; if it states none, nobody knows at which."""
+    if asked is None:
+        return own.temperature is None or recipe is None or matches(own.temperature, recipe)
+    ran = own.temperature or recipe
     return (
-        own.temperature.low - TEMPERATURE_MATCH_K <= asked.low
-        and asked.high <= own.temperature.high + TEMPERATURE_MATCH_K
+        ran is not None
+        and ran.low - TEMPERATURE_MATCH_K <= asked.low
+        and asked.high <= ran.high + TEMPERATURE_MATCH_K
     )
 
 

@@ -8,8 +8,11 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass, field
+from typing import Annotated
 
 from builder.engine import Allowance, PublishedKind, Rank
+from builder.records.conversion import LATER
+from builder.records.quantities import Quantity
 from builder.records.terms import (
     Barrier,
     CoupleEffect,
@@ -31,6 +34,15 @@ class Span:
 
     low: float
     high: float
+
+
+def span_of(quantity: Quantity | None) -> Span | None:
+    """Return the lowest and highest value of a quantity; None if it is not stated or has an open end."""
+    if quantity is None:
+        return None
+    low = quantity.low if quantity.value is None else quantity.value
+    high = quantity.high if quantity.value is None else quantity.value
+    return None if low is None or high is None else Span(low=low, high=high)
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -115,10 +127,10 @@ class EtchantFacts:
     temperature: Span | None = None
     hazard: int = 0
     cautions: tuple[str, ...] = ()
-    rows: Mapping[str, tuple[PublishedFact, ...]] = field(default_factory=dict)
-    said: Mapping[str, tuple[SaidFact, ...]] = field(default_factory=dict)
-    gas: Mapping[str, tuple[GasFact, ...]] = field(default_factory=dict)
-    alone: Mapping[str, tuple[GasFact, ...]] = field(default_factory=dict)
+    rows: Annotated[Mapping[str, tuple[PublishedFact, ...]], LATER] = field(default_factory=dict)
+    said: Annotated[Mapping[str, tuple[SaidFact, ...]], LATER] = field(default_factory=dict)
+    gas: Annotated[Mapping[str, tuple[GasFact, ...]], LATER] = field(default_factory=dict)
+    alone: Annotated[Mapping[str, tuple[GasFact, ...]], LATER] = field(default_factory=dict)
     bond: tuple[GasFact, ...] = ()
 
 
@@ -169,8 +181,8 @@ class EtchFacts:
     cycle_s: float | None = None
     ratio: RatioFact | None = None
     masks: tuple[MaskFact, ...] = ()
-    own: Mapping[str, OwnFact] = field(default_factory=dict)
-    gas: Mapping[str, tuple[GasFact, ...]] = field(default_factory=dict)
+    own: Annotated[Mapping[str, OwnFact], LATER] = field(default_factory=dict)
+    gas: Annotated[Mapping[str, tuple[GasFact, ...]], LATER] = field(default_factory=dict)
     forbidden: tuple[str, ...] = ()
     cautions: tuple[str, ...] = ()
     clearing: str = ""
@@ -248,9 +260,9 @@ class PlanFacts:
     format: int
     as_of: str
     defaults: Defaults
-    films: Mapping[str, FilmFacts]
-    etchants: Mapping[str, EtchantFacts]
-    etches: Mapping[str, EtchFacts]
+    films: Annotated[Mapping[str, FilmFacts], LATER]
+    etchants: Annotated[Mapping[str, EtchantFacts], LATER]
+    etches: Annotated[Mapping[str, EtchFacts], LATER]
     refused: Mapping[str, Mapping[str, str]] = field(default_factory=dict)
     couples: tuple[CoupleFact, ...] = ()
     meetings: tuple[MeetingFact, ...] = ()

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from builder.engine import PublishedKind, Rank
-from builder.findings.plan.facts import EtchantFacts, PublishedFact, SaidFact, Span
+from builder.findings.plan.facts import EtchantFacts, PublishedFact, SaidFact, span_of
 from builder.findings.plan.gather_safety import alone_by_film, gas_by_film, of_bond
 from builder.findings.safety import cautions_of, hazard_score
 from builder.records.etchants import Etchant
@@ -96,12 +96,3 @@ def _said(statement: Statement) -> SaidFact:
         effect=statement.effect, words=statement.words, source=statement.source,
         temperature=span_of(statement.temperature),
     )  # fmt: skip
-
-
-def span_of(quantity: Quantity | None) -> Span | None:
-    """Return the lowest and highest value of a quantity; None if it is not stated or has an open end."""
-    if quantity is None:
-        return None
-    low = quantity.low if quantity.value is None else quantity.value
-    high = quantity.high if quantity.value is None else quantity.value
-    return None if low is None or high is None else Span(low=low, high=high)

@@ -6,8 +6,7 @@ from collections.abc import Iterable, Mapping, Sequence
 
 from builder.findings.own_rates import OwnRate, at_confidence, films_run, own_rate
 from builder.findings.plan.defaults import default_phi, defaults_of
-from builder.findings.plan.facts import EtchFacts, LevelBand, MaskFact, OwnFact, RatioFact, Span
-from builder.findings.plan.gather_etchants import span_of
+from builder.findings.plan.facts import EtchFacts, LevelBand, MaskFact, OwnFact, RatioFact, Span, span_of
 from builder.findings.plan.gather_safety import of_recipe, of_recipe_by_film
 from builder.records.etches import Etch
 from builder.records.lab import LabRecords
@@ -89,12 +88,22 @@ def _own(records: LabRecords, rate: OwnRate, levels: Sequence[float]) -> OwnFact
     assert times is not None
     return OwnFact(
         levels=tuple(bands), runs=rate.next_run.n_runs, limits=rate.next_run.n_limits, times=times,
-        limit_s=times.high if rate.next_run.n_runs == 0 else None,
+        limit_s=_limit_time(rate) if rate.next_run.n_runs == 0 else None,
         temperature=_span(
             None if row.temperature_degc is None else row.temperature_degc + _ZERO_DEGC_K for row in rows
         ),
         load_cm2=_span(row.load_cm2 for row in rows), induction_s=rate.induction_s,
     )  # fmt: skip
+
+
+def _limit_time(rate: OwnRate) -> float:
+    """Longest time of the runs whose limit is the smallest: a greater one says less about a longer time, s."""
+    limits = [
+        (run.rate.limit_nm_per_s, -max(row.time_s for row in run.rows))
+        for run in rate.used
+        if run.rate.limit_nm_per_s is not None
+    ]
+    return -min(limits)[1]
 
 
 def _span(values: Iterable[float | None]) -> Span | None:

@@ -75,7 +75,8 @@ def allowed_loss(reach: Reaching, case: Case) -> float | None:
     """Return what a film may still lose, nm: as stated, or by the lab's default; None where neither says."""
     film = case.film
     stated = film.allowed_nm
-    if film.may_vanish:
+    least = _least_mask_nm(reach, case)
+    if film.may_vanish and math.isinf(least):
         return math.inf
     if film.spent_nm is None:
         return None
@@ -83,7 +84,15 @@ def allowed_loss(reach: Reaching, case: Case) -> float | None:
         stated = _default_allowance(reach, case)
     if stated is None:
         return None
-    return max(0.0, stated - film.spent_nm)
+    return max(0.0, min(stated, least) - film.spent_nm)
+
+
+def _least_mask_nm(reach: Reaching, case: Case) -> float:
+    """The mask on the target protects no longer than its thinnest place lasts, whatever it may lose, nm."""
+    protects = case.role is Role.MASK and reach.method is not Method.LIFT_OFF
+    if not protects or case.film not in reach.stage.masks[:1]:
+        return math.inf
+    return case.film.thickness_nm * (1 - case.film.tolerance)
 
 
 def _default_allowance(reach: Reaching, case: Case) -> float | None:

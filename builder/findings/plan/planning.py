@@ -9,8 +9,7 @@ from dataclasses import dataclass, replace
 from builder.engine import Verdict
 from builder.findings.plan.evidence import Asked
 from builder.findings.plan.exposures import ORGANIC
-from builder.findings.plan.facts import MeetingFact, PlanFacts
-from builder.findings.plan.gather_etchants import span_of
+from builder.findings.plan.facts import MeetingFact, PlanFacts, span_of
 from builder.findings.plan.offers import etchant_offer, offers
 from builder.findings.plan.result import (
     Excluded,

@@ -6,8 +6,7 @@ import math
 from collections.abc import Iterable
 from dataclasses import dataclass, replace
 
-from builder.findings.plan.facts import Defaults, Span
-from builder.findings.plan.gather_etchants import span_of
+from builder.findings.plan.facts import Defaults, Span, span_of
 from builder.records.quantities import Quantity
 from builder.records.samples import NOTHING_UNDER, Sample, SampleFilm
 from builder.records.terms import Edge, Exposure, Role, Surface

@@ -10,7 +10,7 @@ from __future__ import annotations
 import hashlib
 import json
 import os
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterable, Iterator, Mapping
 from dataclasses import dataclass, field
 from pathlib import Path
 
@@ -31,19 +31,19 @@ class FactNames:
     tools: dict[str, object] = field(default_factory=dict)
 
     @property
-    def films(self) -> dict[str, object]:
+    def films(self) -> Mapping[str, object]:
         """Films and families of films, by id."""
-        return dict(self.facts.films)
+        return self.facts.films
 
     @property
-    def etchants(self) -> dict[str, object]:
+    def etchants(self) -> Mapping[str, object]:
         """Etchants, by id."""
-        return dict(self.facts.etchants)
+        return self.facts.etchants
 
     @property
-    def etches(self) -> dict[str, object]:
+    def etches(self) -> Mapping[str, object]:
         """Recipes, by id."""
-        return dict(self.facts.etches)
+        return self.facts.etches
 
     @property
     def film_names(self) -> FilmNames:
@@ -59,12 +59,10 @@ def names_of(facts: PlanFacts) -> FactNames:
 def load(lab: Path, key: str) -> PlanFacts | None:
     """Return the stored facts of that key, or None if there are none that can be used."""
     try:
-        data = json.loads((lab / STORE / _name(key)).read_text(encoding="utf-8"))
-        if not isinstance(data, dict) or data.get("key") != key:
-            return None
-        return facts_from_plain(data["facts"])
-    except (OSError, ValueError, KeyError, TypeError):
-        # A store that cannot be read, or was written by another version, is no store.
+        stamp, _, text = (lab / STORE / _name(key)).read_bytes().partition(b"\n")
+        return facts_from_plain(json.loads(text)) if stamp == _stamp(key, text) else None
+    except Exception:
+        # Whatever a spoilt copy or one of another version raises, it is no store: records are at hand.
         return None
 
 
@@ -76,7 +74,8 @@ def save(lab: Path, key: str, facts: PlanFacts) -> None:
         for old in folder.glob("plan-*.json"):
             old.unlink()
         beside = folder / f"{_name(key)}.{os.getpid()}"
-        beside.write_text(json.dumps({"key": key, "facts": plain(facts)}), encoding="utf-8")
+        text = json.dumps(plain(facts)).encode()
+        beside.write_bytes(_stamp(key, text) + b"\n" + text)
         beside.replace(folder / _name(key))
     except OSError:
         return
@@ -114,6 +113,11 @@ def _pairs(films: Iterable[FilmFacts]) -> list[tuple[str, str]]:
         *((film.id, name) for film in ordered for name in (film.id, *film.names)),
         *((film.id, film.formula) for film in ordered if film.formula),
     ]
+
+
+def _stamp(key: str, text: bytes) -> bytes:
+    """What the facts were made for, and a digest that tells whether they are whole."""
+    return f"{key} {hashlib.sha256(text).hexdigest()}".encode()
 
 
 def _name(key: str) -> str:

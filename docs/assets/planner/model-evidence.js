@@ -95,7 +95,7 @@
     const counting = rows.filter((row) => matches(facts, row.temperature, temperature));
     const said = saidOf(facts, etching, film.id, temperature);
     const own = etching.recipe ? at(etching.recipe.own, film.id) : undefined;
-    const far = Boolean(own) && !wasRunAt(facts, own, asked.temperature);
+    const far = Boolean(own) && !wasRunAt(facts, own, etching.recipe.temperature, asked.temperature);
     const best = bestPublished(facts, counting, asked.confidence);
     let base;
     if (own && !far) base = fromOwn(facts, own, best, counting, asked);
@@ -151,11 +151,12 @@
     return said;
   }
 
-  /** @param {Facts} facts @param {OwnFact} own @param {Extent | null} asked */
-  function wasRunAt(facts, own, asked) {
-    if (asked === null || own.temperature === null) return true;
+  /** Runs without a temperature were made at the recipe's; if it states none, nobody knows at which. @param {Facts} facts @param {OwnFact} own @param {Extent | null} recipe @param {Extent | null} asked */
+  function wasRunAt(facts, own, recipe, asked) {
+    if (asked === null) return own.temperature === null || recipe === null || matches(facts, own.temperature, recipe);
+    const ran = own.temperature || recipe;
     const near = facts.rules.temperature_match_k;
-    return own.temperature.low - near <= asked.low && asked.high <= own.temperature.high + near;
+    return ran !== null && ran.low - near <= asked.low && asked.high <= ran.high + near;
   }
 
   /** @param {Facts} facts @param {PublishedFact[]} rows @param {number} confidence @returns {Evidence | null} */

@@ -65,10 +65,17 @@
   /** What a film may still lose, nm: as stated, or by the lab's default; null where neither says. @param {Reach} reach @param {Case} one */
   function allowedLoss(reach, one) {
     const film = one.film;
-    if (film.allowedNm === Infinity) return Infinity;
+    const least = leastMaskNm(reach, one);
+    if (film.allowedNm === Infinity && least === Infinity) return Infinity;
     if (film.spentNm === null) return null;
     const stated = film.allowedNm === null ? defaultAllowance(reach, one, film.thicknessNm) : film.allowedNm;
-    return stated === null ? null : Math.max(0, stated - film.spentNm);
+    return stated === null ? null : Math.max(0, Math.min(stated, least) - film.spentNm);
+  }
+
+  /** The mask on the target protects no longer than its thinnest place lasts, whatever it may lose, nm. @param {Reach} reach @param {Case} one */
+  function leastMaskNm(reach, one) {
+    const protects = one.role === "mask" && reach.method !== "lift-off" && one.film === ew.films.masksOf(reach.stage)[0];
+    return protects ? one.film.thicknessNm * (1 - one.film.tolerance) : Infinity;
   }
 
   /** @param {Reach} reach @param {Case} one @param {number} thickness @returns {number | null} */

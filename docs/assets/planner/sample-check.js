@@ -29,15 +29,13 @@
 
   /** @param {Checking} c @param {string} field @param {any} text */
   function temperature(c, field, text) {
-    if (text !== undefined && text !== "room") quantity(c, field, text, "temperature", false);
+    if (text !== undefined) quantity(c, field, text, "temperature", false);
   }
 
   /** @param {Checking} c @param {string} field @param {any} film */
   function filmName(c, field, film) {
     if (!film) return report(c, field, "name the film");
-    const found = ew.evidence.at(c.facts.films, film);
-    if (!found) return report(c, field, 'there is no film "' + film + '"');
-    if (found.is_family) report(c, field, found.name + " stands for several films: name the film as deposited");
+    if (!ew.evidence.at(c.facts.films, film)) report(c, field, 'there is no film "' + film + '"');
   }
 
   /** One film; returns its thickness in nm, or null. @param {Checking} c @param {string} field @param {any} film */
@@ -68,6 +66,7 @@
     let covered = false;
     layers.forEach(function (layer, index) {
       const field = "layers/" + index + "/role";
+      if (!layer.role) report(c, field, "say whether it is a mask, to be removed, or stays");
       if (layer.role === "mask" && below) report(c, field, "a mask lies on top: move it up, or give it another role");
       if (layer.role === "target" && covered) report(c, field, "a kept film covers this target: make that a target too, or a mask if it is patterned");
       if (layer.role !== "mask") below = true;
@@ -112,7 +111,9 @@
     let etches = 0;
     (file.steps || []).forEach(function (/** @type {any} */ step, /** @type {number} */ index) {
       const field = "steps/" + index;
+      if ((step.etch === undefined) === (step.treat === undefined)) return report(c, field + "/etch", "a step is either a treatment or an etch");
       if (step.etch !== undefined) {
+        if (step.etchant || step.time || step.temperature) report(c, field + "/etch", "an etch takes etchant, time and temperature from its recipe");
         etches += 1;
         if (step.etch !== "any" && !ew.evidence.at(c.facts.etches, step.etch)) report(c, field + "/etch", 'there is no recipe "' + step.etch + '"');
         if (etches > targets) report(c, field + "/etch", "more etches than targets: nothing is left to remove");

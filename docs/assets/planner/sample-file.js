@@ -97,9 +97,6 @@
     const cleaning = { dropped: [] };
     const file = SAMPLE(data, "", cleaning);
     if (!file || !Array.isArray(file.layers)) return { file: null, dropped: [], fault: "This is no sample: it has no list of layers." };
-    for (const one of file.layers) {
-      if (!one.role) one.role = "under";
-    }
     return { file: file, dropped: cleaning.dropped, fault: "" };
   }
 

@@ -1,6 +1,6 @@
 // @ts-check
 /*
- * Sentences of a plan, made of its codes. Twin of builder/views/plan_words.py; `named` turns the id of a film or
+ * Sentences of a plan, made of its codes. Twin of builder/views/{plan_words,plan_cap_words,test_piece}.py; `named` turns the id of a film or
  * an etchant into the name that is shown.
  */
 (function (ew) {
@@ -24,6 +24,11 @@
     "statement-attacks": "said to be attacked",
     "no-evidence": "nothing on record for this film in this etch",
     "time-unknown": "nobody knows how long the etch takes, so its loss is unknown",
+  };
+  const OF_A_MEMBER = {
+    "mild-end-exceeds": "even the mild end takes more of one than is allowed",
+    straddles: "one may lose more than is allowed",
+    "within-allowed": "each loses no more than is allowed",
   };
   /** @type {{[code: string]: (p: any, named: Named) => string}} */
   const CAPS = {
@@ -106,6 +111,9 @@
     line: () => "the width of the narrowest masked line",
     stop: () => "a carrier, or a film to stop on",
   };
+  const SETTLED_BY_TEST = new Set(["beyond-tested-time", "no-evidence", "no-high-end", "straddles", "unchecked"]);
+  /** Ten minutes: long enough to see a nanometre a minute, short enough to be done today. */
+  const TEST_S = 600;
   const HINTS = {
     temperature: "a rate is on record at another temperature",
     conditions: "a rate or a statement is on record under other conditions",
@@ -173,6 +181,8 @@
     if (row.ground === "no-allowance" && row.spentNm === null) return "how much of it may still go is not known";
     const fixed = GROUNDS[/** @type {keyof typeof GROUNDS} */ (row.ground)];
     if (fixed) return fixed;
+    // A family with a member that nobody measured has no loss as a whole, but a member's word stands.
+    if (row.loss.low === null) return "of the films it may be, " + OF_A_MEMBER[/** @type {keyof typeof OF_A_MEMBER} */ (row.ground)];
     const numbers = ew.numbers;
     const isOpen = row.allowedNm === null || row.allowedNm === Infinity;
     const allowed = isOpen ? "" : " of " + size(/** @type {number} */ (row.allowedNm)) + " allowed";
@@ -222,6 +232,21 @@
     return RANKS[/** @type {keyof typeof RANKS} */ (rank)];
   }
 
+  /** The short test that would settle a film's word, or nothing where stating something would. @param {FilmRow} row @param {string} family @param {Named} named */
+  function testPieceWords(row, family, named) {
+    if ((row.rank === "own" || row.rank === "literature") && !SETTLED_BY_TEST.has(row.ground)) return "";
+    const isReached = row.exposure !== null && row.exposure.highS > 0;
+    const timeS = isReached ? Math.min(TEST_S, /** @type {Exposure} */ (row.exposure).highS) : TEST_S;
+    const where = row.role === "mask" ? " on the same film as here" : "";
+    return "etch a test piece of " + named(row.film) + where + " for " + time(timeS) + " and read " + gaugeWords(family);
+  }
+
+  /** @param {string} family */
+  function gaugeWords(family) {
+    if (family === "metal") return "the step or the sheet resistance before and after";
+    return family === "semiconductor" ? "the thickness or the step before and after" : "the thickness before and after on the optical gauge";
+  }
+
   /** What would lift a cap. @param {string} code */
   function liftWords(code) {
     return LIFTS[/** @type {keyof typeof LIFTS} */ (code)];
@@ -233,6 +258,6 @@
   const excludedWords = (/** @type {Remark} */ item, /** @type {Named} */ named) => EXCLUDED[item.code](item.params, named);
 
   ew.strings = Object.freeze({
-    reason, blocker, rowName, rankWords, liftWords, capWords, noteWords, unstatedWords, excludedWords, hintWords, capital, listed,
+    reason, blocker, rowName, rankWords, liftWords, testPieceWords, capWords, noteWords, unstatedWords, excludedWords, hintWords, capital, listed,
   });
 })((globalThis.etchwright = globalThis.etchwright || {}));

@@ -79,11 +79,14 @@
     return [el("h5", {}, title), el("ul", {}, lines.map((line) => el("li", {}, line)))];
   }
 
-  /** What would lift each cap. @param {any} shown @param {Option} option */
+  /** What would lift each cap, and which test would give the numbers that are missing. @param {any} shown @param {Option} option */
   function lifts(shown, option) {
     const all = [...option.planCaps, ...option.rows.flatMap((row) => row.caps)];
     const byCode = new Map(all.map((cap) => [cap.code, cap]));
-    return Array.from(byCode.values()).map((cap) => ew.strings.capital(ew.strings.capWords(cap, named(shown))) + ": " + ew.strings.liftWords(cap.code) + ".");
+    const tests = option.rows.map((row) => ew.strings.testPieceWords(row, shown.data.facts.films[row.film].family, named(shown)));
+    const toTest = ew.evidence.distinct(tests.filter(Boolean)).map((/** @type {string} */ words) => ew.strings.capital(words) + ".");
+    const toState = Array.from(byCode.values()).map((cap) => ew.strings.capital(ew.strings.capWords(cap, named(shown))) + ": " + ew.strings.liftWords(cap.code) + ".");
+    return [...toState, ...toTest];
   }
 
   /** The part of a film that stays in the worst case; null where nobody knows. @param {FilmRow | undefined} row @param {number} thickness */

@@ -62,7 +62,7 @@
       el("div", { class: hooks.fields },
         fields.named(shown, "Film", field + "/film", shown.entries, { placeholder: "oxide, Si3N4, Al …", kind: hooks.wide }),
         fields.text(shown, "Thickness", field + "/thickness", { placeholder: "500 nm +/- 10 nm", kind: hooks.narrow }),
-        fields.labelled("Role", field + "/role", fields.select(layer.role, ROLES, (/** @type {string} */ value) => shown.send({ type: "set", field: field + "/role", value: value, rebuild: true })), hooks.narrow),
+        fields.labelled("Role", field + "/role", fields.select(layer.role || "", layer.role ? ROLES : [["", "choose …"], ...ROLES], (/** @type {string} */ value) => shown.send({ type: "set", field: field + "/role", value: value, rebuild: true })), hooks.narrow),
         itemButtons(shown, "layers", index, shown.state.file.layers.length, name, true)),
       !isTarget && fewFields(shown, field, layer, false));
   }
@@ -151,7 +151,7 @@
     return group("What may be used",
       el("div", { class: hooks.choices, role: "group", "aria-label": "Methods; none chosen means any" }, methods),
       el("div", { class: hooks.fields },
-        fields.text(shown, "Temperature of the etch", "temperature", { placeholder: "80 degC, or room", kind: hooks.narrow }),
+        fields.text(shown, "Temperature of the etch", "temperature", { placeholder: "80 degC", kind: hooks.narrow }),
         fields.text(shown, "Hottest the sample may get", "limits/temperature", { placeholder: "120 degC", kind: hooks.narrow }),
         fields.named(shown, "Carrier", "mount/carrier", shown.entries, { placeholder: "a film, or words" }),
         fields.text(shown, "Held by", "mount/bond", { placeholder: "thermal wax" })),

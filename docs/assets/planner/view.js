@@ -15,7 +15,6 @@
     const removes = new Map();
     for (const etch of Object.values(facts.etches)) for (const film of etch.targets) removes.set(film, (removes.get(film) || 0) + 1);
     const films = Object.values(facts.films)
-      .filter((film) => !film.is_family)
       .map((film) => ({ id: film.id, name: film.name, also: [...film.names, film.formula].filter((name) => name && name !== film.name), kind: "film", recipes: removes.get(film.id) || 0 }));
     const etchants = Object.values(facts.etchants).map((one) => ({ id: one.id, name: one.name, also: [], kind: "etchant", recipes: 1 }));
     return { films: films, etchants: etchants };
