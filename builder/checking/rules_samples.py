@@ -161,6 +161,13 @@ def _no_wafer(sample: Sample) -> Iterator[SampleFault]:
         yield "/goal/depth", words, "list the wafer among the layers, as a target"
 
 
+def _nothing_left(sample: Sample) -> Iterator[SampleFault]:
+    etches = [index for index, step in enumerate(sample.steps) if step.etch is not None]
+    for index in etches[len(sample.targets) :]:
+        words = "more etches than targets: nothing is left to remove"
+        yield f"/steps/{index}", words, "make the film it removes a target, or take the step out"
+
+
 def _unclear_steps(sample: Sample) -> Iterator[SampleFault]:
     for index, step in enumerate(sample.steps):
         pointer = f"/steps/{index}"
@@ -186,6 +193,7 @@ SAMPLE_RULES: tuple[SampleRule, ...] = (
     SampleRule("too-deep-for-target", _depth),
     SampleRule("no-wafer", _no_wafer),
     SampleRule("unclear-step", _unclear_steps),
+    SampleRule("nothing-left", _nothing_left),
 )
 
 

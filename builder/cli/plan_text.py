@@ -62,10 +62,14 @@ def plan_lines(plan: Plan, facts: PlanFacts, *, every: bool) -> Iterator[str]:
 
 def _headline(plan: Plan) -> str:
     """What a person came for, in the first line."""
-    stages = [stage for stage in plan.stages if stage.treat is None or stage.etchant is not None]
+    stages = [stage for stage in plan.stages if stage.counts]
     for stage in stages:
+        if stage.treat is not None and stage.etchant is None:
+            return (
+                f"{plan.sample}: what step {stage.step} ({stage.treat}) is done with is not stated (etchant)."
+            )
         if not stage.options:
-            aim = stage.target or stage.treat
+            aim = stage.target or stage.treat or "more than the depth asked for"
             return f"{plan.sample}: nothing on record removes {aim} on this sample; see why below."
     option = max((stage.options[0] for stage in stages), key=lambda best: best.verdict.order)
     return f"{plan.sample}: {_name(option)} {_word(option.verdict)}. {blocker(option)}"

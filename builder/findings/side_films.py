@@ -52,12 +52,17 @@ def row_after(computed: Computed, etching: Etching, film: str, time_s: float | N
     fixed = UNKNOWN_SCHEDULE
     if time_s is not None:
         fixed = Schedule(time_s, time_s, time_s, None, time_s, None, None, None)
-    # The time is set, not computed: no target's rate makes it less sure. But a published number of a
-    # chamber in which no own run has removed a target stays capped.
-    recipe = etching.recipe
-    has_run = recipe is not None and any(target in recipe.own for target in recipe.targets)
-    rank = Rank.OWN if has_run else Rank.LITERATURE
+    # The time is set, so no target's rate makes it less sure; but a published number of a chamber counts
+    # for this one only where the chamber has own runs of what it is for.
+    rank = Rank.OWN if _has_own_target(computed, etching) else Rank.LITERATURE
     return _row(computed, facts, etching, Timing(None, cut, fixed), film, film, Role.EXPOSED, rank)
+
+
+def _has_own_target(computed: Computed, etching: Etching) -> bool:
+    recipe = etching.recipe
+    if recipe is None:
+        return False
+    return any(computed.known(recipe.id, film).rank is Rank.OWN for film in recipe.targets)
 
 
 def _row(

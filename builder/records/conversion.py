@@ -216,6 +216,9 @@ class _Later(Mapping[str, object]):
             self._made[key] = self._convert(self._values[key])
         return self._made[key]
 
+    def get(self, key: str, default: object = None) -> object:
+        return self[key] if key in self._values else default
+
     def __iter__(self) -> Iterator[str]:
         return iter(self._values)
 

@@ -29,6 +29,14 @@ _CAPS: dict[str, Sentence] = {
     CapCode.EDGE: lambda p: "whether the sample's edge is open is not stated",
     CapCode.FAMILY: lambda p: "the film is not known exactly; the worst of those it may be counts",
     CapCode.HEAT: lambda p: "no record of cooling; the mask may get hot",
+    CapCode.HEAT_LIMIT: lambda p: (
+        f"the sample may see {temperature_of(p, 'limit_k')}, and "
+        + (
+            "how hot this etch gets is not on record"
+            if p["at_k"] is None
+            else f"the etch is asked for at {temperature_of(p, 'at_k')}"
+        )
+    ),
     CapCode.LINE: lambda p: (
         f"a line of {length_of(p, 'line_nm')} may lose {length_of(p, 'undercut_nm')} from each edge"
     ),
@@ -44,6 +52,10 @@ _CAPS: dict[str, Sentence] = {
     ),
     CapCode.UNDERCUT_UNKNOWN: lambda p: (
         "how far the edge moves is not on record, and a line width is asked for"
+    ),
+    CapCode.WINDOW: lambda p: (
+        f"an opening of {length_of(p, 'window_nm')} is far from that of the runs, "
+        f"{between(length_of(p, 'low_nm'), length_of(p, 'high_nm'))}"
     ),
 }
 
@@ -61,6 +73,7 @@ LIFTS: dict[str, str] = {
     CapCode.EDGE: "state edge: open, protected or unused",
     CapCode.FAMILY: "name the film as deposited",
     CapCode.HEAT: "record the recipe's cooling",
+    CapCode.HEAT_LIMIT: "record the recipe's temperature, or pick a cooler etch",
     CapCode.LINE: "make the line wider, or pick an etch with less undercut",
     CapCode.LOAD: "run a monitor wafer with this load",
     CapCode.PUBLISHED_CHAMBER: "run one monitor wafer of the target in this chamber",
@@ -68,6 +81,7 @@ LIFTS: dict[str, str] = {
     CapCode.UNDER_NOBLE: "state on: the film under it, or on: none",
     CapCode.UNDERCUT_ASSUMED: "measure the undercut and record the recipe's undercut_ratio",
     CapCode.UNDERCUT_UNKNOWN: "measure the undercut and record the recipe's undercut_ratio",
+    CapCode.WINDOW: "run a monitor wafer with this opening",
 }
 
 _LOST: dict[str, Sentence] = {

@@ -6,6 +6,7 @@ import math
 
 from builder.engine import RateBand, Span
 from builder.findings.plan.result import Excluded, FilmRow, Option, Plan, StagePlan
+from builder.views.plan_cap_words import cap_words
 from builder.views.plan_words import excluded_words, hint_words, note_words, reason, unstated_words
 
 FORMAT = 1
@@ -64,7 +65,11 @@ def _option(option: Option) -> dict[str, object]:
         },
         "undercut_nm": _span(option.undercut),
         "films": [_film(row) for row in option.rows],
-        "cautions": [note_words(note) for note in option.notes],
+        # Without films there is no reason of a film to say what keeps the plan from "holds".
+        "cautions": [
+            *(cap_words(cap) for cap in option.caps if not option.rows),
+            *(note_words(note) for note in option.notes),
+        ],
         "not_stated": [unstated_words(item) for item in option.unstated],
     }
 

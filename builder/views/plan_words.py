@@ -88,6 +88,7 @@ _UNSTATED: dict[str, Sentence] = {
     UnstatedCode.LOAD: lambda p: "the open area (goal.load_cm2)",
     UnstatedCode.LINE: lambda p: "the width of the narrowest masked line (goal.line)",
     UnstatedCode.STOP: lambda p: "a carrier, or a film to stop on",
+    UnstatedCode.WINDOW: lambda p: "the width of the narrowest opening (goal.window)",
 }
 
 _HINTS = {
@@ -206,6 +207,8 @@ def _without_films(option: Option) -> str:
         return "How long the etch takes is not on record."
     if option.verdict is Verdict.HOLDS:
         return "No other film is reached."
+    if option.caps:
+        return f"{_capital(cap_words(option.caps[0]))}."
     return f"The target's rate rests on {RANK_WORDS[option.target_rank]}."
 
 

@@ -19,6 +19,7 @@ SCRIPTS = (
     "model-films",
     "model-couples",
     "model-judging",
+    "model-caps",
     "model-option",
     "model-plan",
     "model-sample",

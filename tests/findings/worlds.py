@@ -30,7 +30,7 @@ from builder.records.terms import CoupleEffect, Edge, Effect, Exposure, Method, 
 from tests.findings.fact_builder import FILMS, couple, etchant, facts, own, rate, recipe, said
 
 LEVELS = (0.80, 0.90, 0.95, 0.99)
-_THICKNESS = (1.0, 5.0, 19.0, 20.0, 30.0, 100.0, 500.0, 1400.0, 8000.0, 525_000.0)
+_THICKNESS = (5.0, 19.0, 20.0, 30.0, 100.0, 500.0, 1400.0, 8000.0, 525_000.0)
 _PARTS = (0.05, 0.3, 0.7, 0.95)
 
 
@@ -151,7 +151,7 @@ def created(before: Option, after: Option) -> list[object]:
     return found + [pair for pair in pairs if pair[1].order == 0 != pair[0].order]
 
 
-_rates = st.sampled_from((0.0, 0.0003, 0.003, 0.03, 0.3, 3.0, 30.0, 300.0))
+_rates = st.sampled_from((0.0, 0.0003, 0.003, 0.03, 0.3, 1.0, 3.0, 30.0))
 _ratios = st.sampled_from((1.0, 1.1, 1.6, 4.0))
 
 
@@ -181,7 +181,8 @@ _statements = st.lists(st.builds(said, st.sampled_from(Effect)), max_size=2)
 
 @st.composite
 def _recipes(draw: st.DrawFn, target: str) -> EtchFacts:
-    known = draw(st.sets(st.sampled_from(sorted(FILMS)), max_size=5)) - {"some-oxide", target}
+    names = sorted(set(FILMS) - {"some-oxide", target})
+    known = draw(st.sets(st.sampled_from(names), min_size=3, max_size=8))
     rates = {id: draw(_own_facts()) for id in sorted(known)}
     if draw(st.integers(0, 5)):
         rates[target] = draw(_own_facts(target=True))
@@ -210,7 +211,9 @@ def built_worlds(draw: st.DrawFn) -> World:
     if made is None and not published.get(target) and draw(st.booleans()):
         bath = replace(bath, rows={**bath.rows, target: (rate(100.0),)})
     known = facts(bath, made, draw(_couples()))
-    sample = draw(samples(names, target))
+    on_record = [*(made.own if made is not None else ()), *(id for id, rows in published.items() if rows)]
+    # Most films are on record, or hardly any would hold and a law on "holds" would say little.
+    sample = draw(samples([*on_record * 4, *names], target))
     return World(known, "bath", None if made is None else "dip", sample)
 
 
@@ -273,13 +276,14 @@ def samples(draw: st.DrawFn, names: Sequence[str], target: str) -> PlanSample:
     masks = draw(st.lists(_films(names, Role.MASK), max_size=2))
     under = draw(st.lists(_films(names, Role.UNDER), max_size=3))
     exposed = draw(st.lists(_films(names, Role.EXPOSED), max_size=3))
-    back = draw(st.none() | _films(names, Role.BACK))
-    thickness = draw(st.sampled_from(_THICKNESS[4:8]))
+    back = draw(st.none() | st.none() | _films(names, Role.BACK))
+    thickness = draw(st.sampled_from(_THICKNESS[3:6]))
     removed = PlanFilm(target, thickness, Role.TARGET, draw(st.sampled_from((0.0, 0.02))))
     return PlanSample(
-        "random", (*masks, removed, *under), tuple(exposed), back, back is None and draw(st.booleans()),
-        edge=draw(st.sampled_from((None, *Edge))),
+        "random", (*masks, removed, *under), tuple(exposed), back,
+        back is None and draw(st.integers(0, 4)) > 0,
+        edge=draw(st.sampled_from((None, *Edge, Edge.PROTECTED, Edge.PROTECTED))),
         depth_nm=draw(st.sampled_from((None, None, thickness * 0.5))),
-        line_nm=draw(st.sampled_from((None, 500.0, 5000.0))),
+        line_nm=draw(st.sampled_from((None, None, 500.0, 5000.0))),
         load_cm2=draw(st.sampled_from((None, 10.0, 78.5))),
     )  # fmt: skip

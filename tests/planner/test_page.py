@@ -321,6 +321,8 @@ def test_the_run_card_holds_what_the_bench_needs(open_page: Open, http_root: str
     card = page.locator(".plan-card")
     for words in (
         "Run to time:",
+        "first after",
+        "unevenness 2.5 %",
         "Found from 101 nm/min",
         "bath temperature 20 °C",
         "within 5 s",

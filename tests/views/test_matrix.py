@@ -6,6 +6,7 @@ import functools
 import json
 import re
 from collections import Counter
+from dataclasses import replace
 
 import pytest
 
@@ -105,6 +106,19 @@ def test_published_chambers_do_not_vouch_for_this_one() -> None:
     for column in chambers:
         for film in column.evidence:
             assert row_after(computed, column.etching, film, 60.0).verdict != "holds", (column.id, film)
+
+
+def test_a_chamber_without_own_runs_borrows_no_safety() -> None:
+    """A published number may hold in a vapour chamber with runs of its own target, and not without."""
+    _, computed = lab()
+    recipe = "molybdenum-xef2"
+    bare = replace(computed.facts.etches[recipe], own={})
+    facts = replace(computed.facts, etches={**computed.facts.etches, recipe: bare})
+    without = replace(computed, facts=facts, own={**computed.own, recipe: {}})
+    with_runs = row_after(computed, computed.etching(recipe), "sin-lpcvd", 1.0)
+    assert (with_runs.rank, with_runs.verdict) == (Rank.LITERATURE, "holds")
+    for film in without.by_recipe[recipe]:
+        assert row_after(without, without.etching(recipe), film, 1.0).verdict != "holds", film
 
 
 def test_columns_stand_by_method_recipes_first() -> None:

@@ -2,10 +2,14 @@
 
 from __future__ import annotations
 
+from typing import TYPE_CHECKING
+
 from builder.engine import Allowance
 from builder.findings.plan.facts import Defaults
-from builder.records.settings import LabSettings
 from builder.records.terms import Method
+
+if TYPE_CHECKING:
+    from builder.records.settings import LabSettings
 
 
 def defaults_of(settings: LabSettings) -> Defaults:

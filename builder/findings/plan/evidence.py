@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterable, Sequence
-from dataclasses import dataclass, replace
+from dataclasses import dataclass, field, replace
 
 from builder.engine import (
     PublishedValue,
@@ -74,6 +74,8 @@ class Etching:
 
     etchant: EtchantFacts
     recipe: EtchFacts | None
+    found: dict[tuple[str, Asked], Evidence] = field(default_factory=dict, compare=False, repr=False)
+    """What was looked up before: a plan asks for the same film many times."""
 
     def own(self, film: str) -> OwnFact | None:
         """The recipe's own runs of a film."""
@@ -86,7 +88,13 @@ class Etching:
 
 
 def evidence(facts: PlanFacts, etching: Etching, film_id: str, asked: Asked) -> Evidence:
-    """Return the evidence for a film, or the worst of its members' for a family."""
+    """Return the evidence for a film, or the worst of its members' for a family; all of the same facts."""
+    if (film_id, asked) not in etching.found:
+        etching.found[film_id, asked] = _looked_up(facts, etching, film_id, asked)
+    return etching.found[film_id, asked]
+
+
+def _looked_up(facts: PlanFacts, etching: Etching, film_id: str, asked: Asked) -> Evidence:
     film = facts.films[film_id]
     if not film.is_family:
         return _of_film(facts, etching, film, asked)
@@ -282,7 +290,7 @@ def _hint(facts: PlanFacts, etching: Etching, film: FilmFacts, rows: Sequence[Pu
     for similar in film.similar:
         if etching.own(similar) or etching.etchant.rows.get(similar) or etching.etchant.said.get(similar):
             return f"similar:{similar}"
-    for other in facts.films.values():
-        if other.is_family and film.id in other.members and etching.etchant.rows.get(other.id):
+    for other in map(facts.films.__getitem__, etching.etchant.rows):
+        if other.is_family and film.id in other.members:
             return f"similar:{other.id}"
     return None

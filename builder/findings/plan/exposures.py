@@ -212,14 +212,17 @@ def _exposed(reach: Reaching) -> Iterator[Case]:
         if film.on is not None and not film.nothing_under and film.on not in named:
             # The film that a pad stands on: its edge is open all round the pad.
             yield _thin_case(reach, film.on, ())
-        elif film.on in in_stack and film.on is not None and reach.is_porous(film.film):
-            yield _thin_case(reach, film.on, ())
+        elif film.on in in_stack and film.on is not None:
+            yield _thin_case(reach, film.on, (), None if reach.is_porous(film.film) else film)
         if reach.film(film.film).noble:
             yield from _under_noble(reach, film, film.on)
 
 
-def _thin_case(reach: Reaching, film: str, caps: tuple[Remark, ...]) -> Case:
+def _thin_case(reach: Reaching, film: str, caps: tuple[Remark, ...], pad: PlanFilm | None = None) -> Case:
+    """What lies under a film: wet from the edge at once, or, in a stack, when the `pad` on it is gone."""
     timer, look = reach.from_start
+    if pad is not None:
+        timer, look = _beneath(reach, pad, timer, look)
     thin = PlanFilm(film, IMPLIED_ADHESION_NM, Role.EXPOSED, 0.0, exposed=Reach.SIDEWALL, assumed=True)
     return Case(thin, Role.EXPOSED, timer, look, caps=caps)
 

@@ -101,6 +101,7 @@ class OwnFact:
     limit_s: float | None = None
     temperature: Span | None = None
     load_cm2: Span | None = None
+    window_nm: Span | None = None
     induction_s: float | None = None
 
 

@@ -13,6 +13,7 @@ from builder.records.lab import LabRecords
 from builder.records.terms import Method, PublishedConditions
 
 _ZERO_DEGC_K = 273.15
+_NM_PER_UM = 1000.0
 
 
 def etch_facts(records: LabRecords, etch: Etch, levels: Sequence[float]) -> EtchFacts:
@@ -92,12 +93,14 @@ def _own(records: LabRecords, rate: OwnRate, levels: Sequence[float]) -> OwnFact
         temperature=_span(
             None if row.temperature_degc is None else row.temperature_degc + _ZERO_DEGC_K for row in rows
         ),
-        load_cm2=_span(row.load_cm2 for row in rows), induction_s=rate.induction_s,
+        load_cm2=_span(row.load_cm2 for row in rows),
+        window_nm=_span(None if row.window_um is None else row.window_um * _NM_PER_UM for row in rows),
+        induction_s=rate.induction_s,
     )  # fmt: skip
 
 
 def _limit_time(rate: OwnRate) -> float:
-    """Longest time of the runs whose limit is the smallest: a greater one says less about a longer time, s."""
+    """Longest time, s, of the runs whose limit is the smallest: a greater limit says less for longer."""
     limits = [
         (run.rate.limit_nm_per_s, -max(row.time_s for row in run.rows))
         for run in rate.used

@@ -19,6 +19,7 @@ from builder.engine import (
     schedule,
 )
 from builder.engine.plan_rules import GOOD_MARGIN, ISOTROPIC_UNDERCUT, RUN_SPAN
+from builder.findings.plan.caps_of_plan import plan_caps, windows_of_runs
 from builder.findings.plan.couples import couplings
 from builder.findings.plan.defaults import default_phi
 from builder.findings.plan.evidence import Asked, Etching, Evidence, evidence
@@ -34,7 +35,7 @@ from builder.findings.plan.result import (
     Remark,
     UnstatedCode,
 )
-from builder.findings.plan.sample import PlanFilm, PlanSample, Stage
+from builder.findings.plan.sample import PlanFilm, PlanSample, Stage, depth_in
 from builder.records.terms import Method, Role, State, Status
 
 
@@ -46,7 +47,7 @@ def plan_option(facts: PlanFacts, etching: Etching, stage: Stage, asked: Asked) 
     undercut, undercut_look = undercuts(reach)
     found = cases(reach)
     couples = couplings(reach, found)
-    caps = (*_plan_caps(reach, known), *couples.plan_caps)
+    caps = (*plan_caps(reach, known), *couples.plan_caps)
     plan = PlanCaps(known.rank, caps, undercut, undercut_look)
     rows = ordered_rows(
         judge(reach, case, plan, couples.caps.get(case.film.film, ()), couples.lost.get(case.film.film))
@@ -70,7 +71,7 @@ def plan_option(facts: PlanFacts, etching: Etching, stage: Stage, asked: Asked) 
         proven=recipe is not None and recipe.status is Status.PROVEN and known.rank is Rank.OWN,
         hazard=etching.etchant.hazard, has_margin=_has_margin(rows),
         phi=timing.cut.nonuniformity, offset_s=timing.cut.offset_s, overetch=timing.cut.overetch,
-        later=tuple(_later(reach)),
+        later=tuple(_later(reach)), caps=caps,
     )  # fmt: skip
 
 
@@ -84,7 +85,7 @@ def _later(reach: Reaching) -> Iterator[LaterTarget]:
 def timing_of(facts: PlanFacts, etching: Etching, stage: Stage, known: Evidence) -> Timing:
     """Return the times at which the target clears, with what fixes them."""
     recipe, target = etching.recipe, stage.target
-    depth, through = stage.sample.depth_nm, is_through(stage.sample, target)
+    depth, through = depth_in(stage.sample, target), is_through(stage.sample, target)
     left, tolerance = left_of(target)
     band = known.band
     if target.spent_nm is None and band is not None:
@@ -105,7 +106,8 @@ def timing_of(facts: PlanFacts, etching: Etching, stage: Stage, known: Evidence)
 
 def is_through(sample: PlanSample, target: PlanFilm) -> bool:
     """Tell whether the whole target is removed."""
-    return sample.depth_nm is None or sample.depth_nm >= target.thickness_nm
+    depth = depth_in(sample, target)
+    return depth is None or depth >= target.thickness_nm
 
 
 def left_of(target: PlanFilm) -> tuple[float, float]:
@@ -163,26 +165,6 @@ def _ratio(reach: Reaching) -> Span:
     if is_isotropic(reach):
         return Span(ISOTROPIC_UNDERCUT, ISOTROPIC_UNDERCUT, ISOTROPIC_UNDERCUT)
     return Span(None, None, None)
-
-
-def _plan_caps(reach: Reaching, known: Evidence) -> Iterator[Remark]:
-    sample, recipe = reach.stage.sample, reach.etching.recipe
-    if known.conflict and known.single:
-        yield Remark(CapCode.CONFLICT)
-    if sample.through_wafer and sample.carrier is None and not reach.stage.below:
-        yield Remark(CapCode.THROUGH_WAFER)
-    own = None if recipe is None else recipe.own.get(reach.stage.target.film)
-    loads = None if own is None else own.load_cm2
-    if loads is not None and sample.load_cm2 is not None:
-        if not RUN_SPAN[0] * loads.low <= sample.load_cm2 <= RUN_SPAN[1] * loads.high:
-            yield Remark(
-                CapCode.LOAD, {"load_cm2": sample.load_cm2, "low_cm2": loads.low, "high_cm2": loads.high}
-            )
-    elif sample.load_cm2 is None and sample.carrier == reach.stage.target.film and not reach.is_wet:
-        # A carrier of the target's own film eats most of the etchant: no run says how fast the piece goes.
-        yield Remark(CapCode.CARRIER_LOAD, {"film": sample.carrier})
-    if reach.facts.films[reach.stage.target.film].is_family:
-        yield Remark(CapCode.FAMILY)
 
 
 def _notes(reach: Reaching, known: Evidence) -> Iterator[Remark]:
@@ -253,6 +235,8 @@ def unstated(reach: Reaching, rows: Sequence[FilmRow]) -> Iterator[Remark]:
         yield Remark(UnstatedCode.LINE)
     if sample.load_cm2 is None and reach.etching.etchant.state is State.PLASMA:
         yield Remark(UnstatedCode.LOAD)
+    if sample.window_nm is None and windows_of_runs(reach) is not None:
+        yield Remark(UnstatedCode.WINDOW)
     if sample.through_wafer and sample.carrier is None and not reach.stage.below:
         yield Remark(UnstatedCode.STOP)
 

@@ -96,8 +96,12 @@ def _sequence(
             state = _after_treatment(facts, state, planned, step)
         else:
             only = None if step.etch in (None, ANY_ETCH) else step.etch
-            stage = stages_of(state.sample)[state.removed]
-            planned = _etch_stage(facts, stage, here, number, only, None, state.wet_with)
+            left = stages_of(state.sample)[state.removed :]
+            if not left:
+                # The depth ends above the target that this step was meant for.
+                stages.append(StagePlan(number, None, None, None, (), ()))
+                continue
+            planned = _etch_stage(facts, left[0], here, number, only, None, state.wet_with)
             state = _after_etch(state, planned)
         stages.append(planned)
     return tuple(stages)
@@ -247,6 +251,6 @@ def verdict_of(planned: Plan) -> Verdict:
     words = [
         stage.options[0].verdict if stage.options else Verdict.UNMEASURED
         for stage in planned.stages
-        if stage.treat is None or stage.etchant is not None
+        if stage.counts
     ]
     return max(words, key=lambda word: word.order, default=Verdict.UNMEASURED)

@@ -7,7 +7,7 @@ from dataclasses import dataclass, field
 from enum import StrEnum
 
 from builder.engine import Exposure, Ground, Mode, Rank, RateBand, Schedule, Span, Verdict
-from builder.records.terms import Effect, Method, Role
+from builder.records.terms import Effect, Method, Role, Treatment
 
 Value = str | float | None
 
@@ -28,6 +28,7 @@ class CapCode(StrEnum):
     EDGE = "edge"
     FAMILY = "family"
     HEAT = "heat"
+    HEAT_LIMIT = "heat-limit"
     LINE = "line"
     LOAD = "load"
     PUBLISHED_CHAMBER = "published-chamber"
@@ -35,6 +36,7 @@ class CapCode(StrEnum):
     UNDER_NOBLE = "under-noble"
     UNDERCUT_ASSUMED = "undercut-assumed"
     UNDERCUT_UNKNOWN = "undercut-unknown"
+    WINDOW = "window"
 
 
 class LostCode(StrEnum):
@@ -74,6 +76,7 @@ class UnstatedCode(StrEnum):
     LOAD = "load"
     LINE = "line"
     STOP = "stop"
+    WINDOW = "window"
 
 
 class ExcludedCode(StrEnum):
@@ -145,7 +148,11 @@ class LaterTarget:
 
 @dataclass(frozen=True)
 class Option:
-    """One etch for one target. `recipe` None: an etchant alone, by published facts."""
+    """
+    One etch for one target. `recipe` None: an etchant alone, by published facts.
+
+    `caps` keep the plan as a whole from "holds"; they stand among each film's caps too.
+    """
 
     recipe: str | None
     etchant: str
@@ -168,6 +175,7 @@ class Option:
     offset_s: float
     overetch: float
     later: tuple[LaterTarget, ...] = ()
+    caps: tuple[Remark, ...] = ()
 
 
 @dataclass(frozen=True)
@@ -181,7 +189,12 @@ class Excluded:
 
 @dataclass(frozen=True)
 class StagePlan:
-    """One stage: a target, or a treatment with an etchant for a time."""
+    """
+    One stage: a target, or a treatment with an etchant for a time.
+
+    A rinse that names no etchant is one in water and has no say in the plan's word; of any other
+    treatment that names none nobody knows what it does.
+    """
 
     step: int
     target: str | None
@@ -189,6 +202,11 @@ class StagePlan:
     etchant: str | None
     options: tuple[Option, ...]
     excluded: tuple[Excluded, ...]
+
+    @property
+    def counts(self) -> bool:
+        """Has this stage a say in the word of the plan?"""
+        return self.treat != Treatment.RINSE or self.etchant is not None
 
 
 @dataclass(frozen=True)
@@ -204,4 +222,8 @@ class Plan:
     @property
     def holds(self) -> bool:
         """Does the best option of every stage hold?"""
-        return all(stage.options and stage.options[0].verdict is Verdict.HOLDS for stage in self.stages)
+        return all(
+            stage.options and stage.options[0].verdict is Verdict.HOLDS
+            for stage in self.stages
+            if stage.counts
+        ) and any(stage.counts for stage in self.stages)

@@ -60,6 +60,7 @@ class PlanSample:
     depth_nm: float | None = None
     through_wafer: bool = False
     line_nm: float | None = None
+    window_nm: float | None = None
     load_cm2: float | None = None
     methods: tuple[str, ...] = ()
     tools: tuple[str, ...] = ()
@@ -104,6 +105,7 @@ def plan_sample(sample: Sample, defaults: Defaults, temperature_k: Span | None =
         depth_nm=None if goal.depth is None else rounded(goal.depth.number),
         through_wafer=goal.is_through_wafer,
         line_nm=_number(goal.line),
+        window_nm=_number(goal.window),
         load_cm2=goal.load_cm2,
         methods=tuple(str(method) for method in limits.methods),
         tools=limits.tools,
@@ -116,12 +118,27 @@ def plan_sample(sample: Sample, defaults: Defaults, temperature_k: Span | None =
 
 
 def stages_of(sample: PlanSample) -> tuple[Stage, ...]:
-    """Return one stage a target, in the order in which the layers are reached."""
+    """Return one stage a target that the depth reaches, in the order in which the layers are reached."""
     return tuple(
         Stage(sample, film, tuple(reversed(sample.layers[:place])), sample.layers[place + 1 :])
         for place, film in enumerate(sample.layers)
-        if film.role is Role.TARGET
+        if film.role is Role.TARGET and is_reached(sample, film)
     )
+
+
+def depth_in(sample: PlanSample, target: PlanFilm) -> float | None:
+    """Return how deep to go into a target, nm: the depth asked for less the targets above; None: through."""
+    if sample.depth_nm is None:
+        return None
+    place = next(place for place, film in enumerate(sample.layers) if film is target)
+    above = sum(film.thickness_nm for film in sample.layers[:place] if film.role is Role.TARGET)
+    return rounded(sample.depth_nm - above)
+
+
+def is_reached(sample: PlanSample, target: PlanFilm) -> bool:
+    """Tell whether the depth asked for goes into a target at all."""
+    depth = depth_in(sample, target)
+    return depth is None or depth > 0
 
 
 def worn(film: PlanFilm, loss_nm: float | None) -> PlanFilm:

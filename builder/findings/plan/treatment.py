@@ -59,7 +59,7 @@ def treatment_option(
             *couples.notes,
         ),
         unstated=tuple(unstated(reach, rows)), proven=False, hazard=etching.etchant.hazard,
-        has_margin=False, phi=cut.nonuniformity, offset_s=0.0, overetch=0.0,
+        has_margin=False, phi=cut.nonuniformity, offset_s=0.0, overetch=0.0, caps=couples.plan_caps,
     )  # fmt: skip
 
 

@@ -90,12 +90,13 @@
 
   /** @param {Facts} facts @param {Etching} etching @param {FilmFacts} film @param {Asked} asked @returns {Evidence} */
   function ofFilm(facts, etching, film, asked) {
-    const temperature = asked.temperature || (etching.recipe ? etching.recipe.temperature : null);
+    const recipe = etching.recipe;
+    const temperature = asked.temperature || (recipe ? recipe.temperature : null);
     const rows = rowsOf(etching, film.id);
     const counting = rows.filter((row) => matches(facts, row.temperature, temperature));
     const said = saidOf(facts, etching, film.id, temperature);
-    const own = etching.recipe ? at(etching.recipe.own, film.id) : undefined;
-    const far = Boolean(own) && !wasRunAt(facts, own, etching.recipe.temperature, asked.temperature);
+    const own = recipe ? at(recipe.own, film.id) : undefined;
+    const far = recipe && own ? !wasRunAt(facts, own, recipe.temperature, asked.temperature) : false;
     const best = bestPublished(facts, counting, asked.confidence);
     let base;
     if (own && !far) base = fromOwn(facts, own, best, counting, asked);

@@ -166,20 +166,22 @@
       found.push(makeCase(film, "exposed", reach.startTimer, reach.startLook, { faces: faces, liesOn: film.on }));
       // The film that a pad stands on: its edge is open all round the pad.
       if (film.on !== null && film.on !== "none" && !named.has(film.on)) found.push(thinCase(reach, film.on, []));
-      else if (film.on !== null && inStack.has(film.on) && isPorous(reach, film.film)) found.push(thinCase(reach, film.on, []));
+      else if (film.on !== null && inStack.has(film.on)) found.push(thinCase(reach, film.on, [], isPorous(reach, film.film) ? null : film));
       if (reach.facts.films[film.film].noble) found.push(...underNoble(reach, film, film.on));
     }
     return found;
   }
 
-  /** @param {Reach} reach @param {string} film @param {Remark[]} caps */
-  function thinCase(reach, film, caps) {
+  /** What lies under a film: wet from the edge at once, or, in a stack, when the `pad` on it is gone. @param {Reach} reach @param {string} film @param {Remark[]} caps @param {PlanFilm | null} [pad] */
+  function thinCase(reach, film, caps, pad) {
+    const start = [reach.startTimer, reach.startLook];
+    const [timer, look] = pad ? beneath(reach, pad, start[0], start[1]) : start;
     /** @type {PlanFilm} */
     const thin = {
       film: film, thicknessNm: IMPLIED_ADHESION_NM, role: "exposed", tolerance: 0, allowedNm: null, on: null,
       isCritical: false, exposed: "sidewall", spentNm: 0, assumed: true,
     };
-    return makeCase(thin, "exposed", reach.startTimer, reach.startLook, { caps: caps });
+    return makeCase(thin, "exposed", timer, look, { caps: caps });
   }
 
   /** The usual adhesion layers of a noble metal, where nobody said what is under it. @param {Reach} reach @param {PlanFilm} film @param {string | null} liesOn @returns {Case[]} */

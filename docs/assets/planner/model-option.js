@@ -14,7 +14,7 @@
     const [undercut, undercutByLook] = undercuts(reach);
     const found = ew.films.cases(reach);
     const couples = ew.couples.couplings(reach, found);
-    const caps = [...planCaps(reach, known), ...couples.planCaps];
+    const caps = [...ew.planCaps.planCaps(reach, known), ...couples.planCaps];
     const plan = { targetRank: known.rank, caps: caps, undercut: undercut, undercutByLook: undercutByLook };
     const rows = judgedRows(reach, found, plan, couples);
     const best = bestWord(known.rank, caps, timing.schedule);
@@ -73,7 +73,7 @@
   function timingOf(facts, etching, stage, known) {
     const { recipe } = etching;
     const target = stage.target;
-    const depth = stage.sample.depthNm;
+    const depth = ew.sample.depthIn(stage.sample, target);
     const through = isThrough(stage.sample, target);
     const [left, tolerance] = leftOf(target);
     // Half of what may be left is no likely thickness, so no time is likely either.
@@ -89,7 +89,8 @@
 
   /** Is the whole target removed? @param {PlanSample} sample @param {PlanFilm} target */
   function isThrough(sample, target) {
-    return sample.depthNm === null || sample.depthNm >= target.thicknessNm;
+    const depth = ew.sample.depthIn(sample, target);
+    return depth === null || depth >= target.thicknessNm;
   }
 
   /** The middle of what is left of a target, nm, and the half-width around it as a fraction. @param {PlanFilm} target @returns {[number, number]} */
@@ -148,39 +149,6 @@
     return isIsotropic(reach) ? { low: assumed, mid: assumed, high: assumed } : ew.times.UNKNOWN_SPAN;
   }
 
-  /** @param {Facts} facts @param {number} value @param {Extent} runs */
-  function isOutsideRuns(facts, value, runs) {
-    const [least, most] = facts.rules.run_span;
-    return !(least * runs.low <= value && value <= most * runs.high);
-  }
-
-  /** @param {Reach} reach */
-  function ownOfTarget(reach) {
-    const recipe = reach.etching.recipe;
-    return recipe ? ew.evidence.at(recipe.own, reach.stage.target.film) : undefined;
-  }
-
-  /** @param {Reach} reach @param {Evidence} known @returns {Remark[]} */
-  function planCaps(reach, known) {
-    const remark = ew.films.remark;
-    const { sample, target, below } = reach.stage;
-    const caps = [];
-    if (known.conflict && known.single) caps.push(remark("conflict"));
-    if (sample.throughWafer && sample.carrier === null && !below.length) caps.push(remark("through-wafer"));
-    const own = ownOfTarget(reach);
-    const loads = own ? own.load_cm2 : null;
-    if (loads && sample.loadCm2 !== null) {
-      if (isOutsideRuns(reach.facts, sample.loadCm2, loads)) {
-        caps.push(remark("load", { load_cm2: sample.loadCm2, low_cm2: loads.low, high_cm2: loads.high }));
-      }
-    } else if (sample.loadCm2 === null && sample.carrier === target.film && !reach.isWet) {
-      // A carrier of the target's own film eats most of the etchant: no run says how fast the piece goes.
-      caps.push(remark("carrier-load", { film: sample.carrier }));
-    }
-    if (reach.facts.films[target.film].is_family) caps.push(remark("family"));
-    return caps;
-  }
-
   /** @param {Reach} reach @param {Evidence} known @returns {Remark[]} */
   function notes(reach, known) {
     const remark = ew.films.remark;
@@ -204,9 +172,9 @@
 
   /** A time far from those of the runs, where no depth series shows that the rate stays. @param {Reach} reach @returns {Remark[]} */
   function timeNotes(reach) {
-    const own = ownOfTarget(reach);
+    const own = ew.planCaps.ownOfTarget(reach);
     const stop = reach.timing.schedule.latestStopS;
-    if (!own || stop === null || own.induction_s !== null || !isOutsideRuns(reach.facts, stop, own.times)) return [];
+    if (!own || stop === null || own.induction_s !== null || !ew.planCaps.isOutsideRuns(reach.facts, stop, own.times)) return [];
     return [ew.films.remark("time-outside-runs", { stop_s: stop, low_s: own.times.low, high_s: own.times.high })];
   }
 
@@ -256,6 +224,7 @@
     if (reach.asked.temperature === null && (!recipe || recipe.temperature === null)) found.push(remark("temperature"));
     if (sample.lineNm === null && ew.films.masksOf(reach.stage).length && isIsotropic(reach)) found.push(remark("line"));
     if (sample.loadCm2 === null && reach.etching.etchant.state === "plasma") found.push(remark("load"));
+    if (sample.windowNm === null && ew.planCaps.windowsOfRuns(reach) !== null) found.push(remark("window"));
     if (sample.throughWafer && sample.carrier === null && !below.length) found.push(remark("stop"));
     return found;
   }

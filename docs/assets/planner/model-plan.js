@@ -128,6 +128,11 @@
         return;
       }
       const stage = ew.sample.stagesOf(state.sample)[state.removed];
+      if (!stage) {
+        // The depth ends above the target that this step was meant for.
+        stages.push({ step: index + 1, target: null, treat: null, etchant: null, timeS: null, stage: stageAfter(state), options: [], excluded: [] });
+        return;
+      }
       const only = step.etch === null || step.etch === "any" ? null : step.etch;
       const planned = etchStage(facts, stage, here, index + 1, only, null, state.wetWith);
       stages.push(planned);
@@ -265,7 +270,8 @@
   /** The worst word among the best options of all stages. @param {Plan} planned */
   function verdictOf(planned) {
     const words = planned.stages
-      .filter((stage) => stage.treat === null || stage.etchant !== null)
+      // A rinse that names no etchant is one in water; of any other such treatment nobody knows what it does.
+      .filter((stage) => stage.treat !== "rinse" || stage.etchant !== null)
       .map((stage) => (stage.options.length ? stage.options[0].verdict : "unmeasured"));
     return words.length ? ew.words.worst(words, "holds") : "unmeasured";
   }

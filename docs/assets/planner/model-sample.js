@@ -58,6 +58,7 @@
       back: back && back !== "protected" ? planFilm(facts, back, "back") : null, backProtected: back === "protected",
       edge: file.edge || null, depthNm: isDepth ? number(facts, goal.depth, "length") : null,
       throughWafer: goal.depth === "through-wafer", lineNm: number(facts, goal.line, "length"),
+      windowNm: number(facts, goal.window, "length"),
       loadCm2: goal.load_cm2 === undefined ? null : goal.load_cm2, methods: limits.methods || [],
       tools: limits.tools || [], etchants: limits.etchants || [], hottestK: hottest ? hottest.high : null,
       carrier: mount.carrier === undefined ? null : mount.carrier, bond: mount.bond === undefined ? null : mount.bond,
@@ -77,10 +78,23 @@
   /** One stage a target, in the order in which the layers are reached. @param {PlanSample} sample @returns {Stage[]} */
   function stagesOf(sample) {
     return sample.layers.flatMap((film, place) =>
-      film.role === "target"
+      film.role === "target" && isReached(sample, film)
         ? [{ sample: sample, target: film, above: sample.layers.slice(0, place).reverse(), below: sample.layers.slice(place + 1) }]
         : [],
     );
+  }
+
+  /** How deep to go into a target, nm: the depth asked for less the targets above; null: through. @param {PlanSample} sample @param {PlanFilm} target @returns {number | null} */
+  function depthIn(sample, target) {
+    if (sample.depthNm === null) return null;
+    const above = sample.layers.slice(0, sample.layers.indexOf(target)).filter((film) => film.role === "target");
+    return rounded(sample.depthNm - above.reduce((sum, film) => sum + film.thicknessNm, 0));
+  }
+
+  /** Does the depth asked for go into a target at all? @param {PlanSample} sample @param {PlanFilm} target */
+  function isReached(sample, target) {
+    const depth = depthIn(sample, target);
+    return depth === null || depth > 0;
   }
 
   /** A film after a step that took at worst `lossNm` (null: nobody knows how much). @param {PlanFilm} film @param {number | null} lossNm */
@@ -133,5 +147,5 @@
     return Object.assign({}, sample, { layers: layers, exposed: [...sample.exposed, ...bared] });
   }
 
-  ew.sample = Object.freeze({ planSample, planSteps, stagesOf, wornSample, cut, stripped, rounded });
+  ew.sample = Object.freeze({ planSample, planSteps, stagesOf, depthIn, wornSample, cut, stripped, rounded });
 })((globalThis.etchwright = globalThis.etchwright || {}));

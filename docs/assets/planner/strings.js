@@ -47,6 +47,9 @@
     edge: () => "whether the sample's edge is open is not stated",
     family: () => "the film is not known exactly; the worst of those it may be counts",
     heat: () => "no record of cooling; the mask may get hot",
+    "heat-limit": (p) =>
+      "the sample may see " + kelvin(p.limit_k) + ", and " +
+      (p.at_k === null ? "how hot this etch gets is not on record" : "the etch is asked for at " + kelvin(p.at_k)),
     line: (p) => "a line of " + size(p.line_nm) + " may lose " + size(p.undercut_nm) + " from each edge",
     load: (p) => "a load of " + area(p.load_cm2) + " is far from that of the runs, " + between(area(p.low_cm2), area(p.high_cm2)),
     "published-chamber": () => "the number is from another chamber, and this one has no own run",
@@ -54,6 +57,8 @@
     "under-noble": (p, named) => named(p.layer) + " is usual under " + named(p.film) + "; what lies there is not stated",
     "undercut-assumed": () => "the undercut is a rule of thumb here; this recipe has none on record",
     "undercut-unknown": () => "how far the edge moves is not on record, and a line width is asked for",
+    window: (p) =>
+      "an opening of " + size(p.window_nm) + " is far from that of the runs, " + between(size(p.low_nm), size(p.high_nm)),
   };
   const LIFTS = {
     adverse: "look at a test piece under the microscope and record what you see",
@@ -69,6 +74,7 @@
     edge: "state whether the edge is open, protected or unused",
     family: "name the film as deposited",
     heat: "record the recipe's cooling",
+    "heat-limit": "record the recipe's temperature, or pick a cooler etch",
     line: "make the line wider, or pick an etch with less undercut",
     load: "run a monitor wafer with this load",
     "published-chamber": "run one monitor wafer of the target in this chamber",
@@ -76,6 +82,7 @@
     "under-noble": "state the film under it, or that there is none",
     "undercut-assumed": "measure the undercut and record it in the recipe",
     "undercut-unknown": "measure the undercut and record it in the recipe",
+    window: "run a monitor wafer with this opening",
   };
   /** @type {{[code: string]: (p: any, named: Named) => string}} */
   const LOST = {
@@ -110,6 +117,7 @@
     load: () => "the open area",
     line: () => "the width of the narrowest masked line",
     stop: () => "a carrier, or a film to stop on",
+    window: () => "the width of the narrowest opening",
   };
   const SETTLED_BY_TEST = new Set(["beyond-tested-time", "no-evidence", "no-high-end", "straddles", "unchecked"]);
   /** Ten minutes: long enough to see a nanometre a minute, short enough to be done today. */
@@ -204,17 +212,18 @@
   /** The one sentence that stands first. @param {Option} option @param {Named} named */
   function blocker(option, named) {
     const row = option.rows[0];
-    if (!row) return withoutFilms(option);
+    if (!row) return withoutFilms(option, named);
     if (option.verdict === "holds") return "Every film holds; closest is " + rowName(row, named) + ": " + reason(row, named) + ".";
-    if (option.verdict !== row.verdict) return withoutFilms(option);
+    if (option.verdict !== row.verdict) return withoutFilms(option, named);
     const verbs = { lost: "is lost", borderline: "may not last", unmeasured: "is unmeasured" };
     return capital(rowName(row, named)) + " " + verbs[/** @type {keyof typeof verbs} */ (row.verdict)] + ": " + reason(row, named) + ".";
   }
 
-  /** @param {Option} option */
-  function withoutFilms(option) {
+  /** @param {Option} option @param {Named} named */
+  function withoutFilms(option, named) {
     if (option.schedule.latestStopS === null) return "How long the etch takes is not on record.";
     if (option.verdict === "holds") return "No other film is reached.";
+    if (option.planCaps.length) return capital(CAPS[option.planCaps[0].code](option.planCaps[0].params, named)) + ".";
     return "The target's rate rests on " + rankWords(option.targetRank) + ".";
   }
 

@@ -9,7 +9,7 @@
  * @typedef {{kind: string, low: number | null, high: number | null, sigma: number, rank: string, source: string, tested_s: number | null, temperature: Extent | null, per_cycle: boolean}} PublishedFact
  * @typedef {{effect: string, words: string, source: string, temperature: Extent | null}} SaidFact
  * @typedef {{confidence: number, low: number, mid: number | null, high: number}} LevelBand
- * @typedef {{levels: LevelBand[], runs: number, limits: number, times: Range, limit_s: number | null, temperature: Extent | null, load_cm2: Extent | null, induction_s: number | null}} OwnFact
+ * @typedef {{levels: LevelBand[], runs: number, limits: number, times: Extent, limit_s: number | null, temperature: Extent | null, load_cm2: Extent | null, window_nm: Extent | null, induction_s: number | null}} OwnFact
  * @typedef {{forbidden: boolean, words: string, from_nm: number}} GasFact
  * @typedef {{id: string, name: string, method: string, state: string, isotropic: boolean, gas_bubbles: boolean, hf_vapour: boolean, temperature: Extent | null, hazard: number, cautions: string[], rows: {[film: string]: PublishedFact[]}, said: {[film: string]: SaidFact[]}, gas: {[film: string]: GasFact[]}, alone: {[film: string]: GasFact[]}, bond: GasFact[]}} EtchantFacts
  * @typedef {{film: string, on: string[], longest_s: number}} MaskFact
@@ -31,7 +31,7 @@
  * @typedef {{confidence: number, temperature: Extent | null, key: string}} Asked `key` names the question
  * @typedef {{rank: string, band: Band | null, limitS: number | null, attacked: boolean, adverse: string[], conflict: boolean, single: boolean, far: boolean, allTemperatures: boolean, hint: string | null, sources: string[], words: string[]}} Evidence
  * @typedef {{film: string, thicknessNm: number, role: string, tolerance: number, allowedNm: number | null, on: string | null, isCritical: boolean, exposed: string, spentNm: number | null, assumed: boolean}} PlanFilm
- * @typedef {{name: string, layers: PlanFilm[], exposed: PlanFilm[], back: PlanFilm | null, backProtected: boolean, edge: string | null, depthNm: number | null, throughWafer: boolean, lineNm: number | null, loadCm2: number | null, methods: string[], tools: string[], etchants: string[], hottestK: number | null, carrier: string | null, bond: string | null, temperature: Extent | null}} PlanSample
+ * @typedef {{name: string, layers: PlanFilm[], exposed: PlanFilm[], back: PlanFilm | null, backProtected: boolean, edge: string | null, depthNm: number | null, throughWafer: boolean, lineNm: number | null, windowNm: number | null, loadCm2: number | null, methods: string[], tools: string[], etchants: string[], hottestK: number | null, carrier: string | null, bond: string | null, temperature: Extent | null}} PlanSample
  * @typedef {{treat: string | null, etch: string | null, etchant: string | null, timeS: number | null, temperature: Extent | null}} PlanStep
  * @typedef {{sample: PlanSample, target: PlanFilm, above: PlanFilm[], below: PlanFilm[]}} Stage
  * @typedef {{sample: PlanSample, removed: number, wetWith: string | null}} PlanState

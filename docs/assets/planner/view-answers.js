@@ -5,7 +5,7 @@
 
   /** The field that states what is asked for, by the code of what is not stated. @param {any} shown @param {Remark} item */
   function fieldOf(shown, item) {
-    const fixed = { back: "back", edge: "edge", temperature: "temperature", load: "goal/load_cm2", line: "goal/line", stop: "mount/carrier" };
+    const fixed = { back: "back", edge: "edge", temperature: "temperature", load: "goal/load_cm2", line: "goal/line", window: "goal/window", stop: "mount/carrier" };
     const found = fixed[/** @type {keyof typeof fixed} */ (item.code)];
     if (found) return found;
     const end = item.code === "allowed" ? "/allowed_loss" : "/on";
@@ -67,10 +67,12 @@
   function stageWords(shown, stage, spoken) {
     const named = ew.viewOption.named(shown);
     const aim = stage.target ? named(stage.target) : stage.treat;
+    if (!stage.treat && !stage.target) return "";
+    if (stage.treat && !stage.options.length) return stage.treat === "rinse" ? "" : stage.step + ". " + ew.strings.capital(stage.treat) + ": unmeasured.";
     if (stage.treat && stage.options[0]) return stage.step + ". " + ew.strings.capital(stage.treat) + ": " + stage.options[0].verdict + ".";
     const start = shown.plan.isSequence ? stage.step + ". " + ew.strings.capital(aim) + ": " : "";
     const option = stage.options[0];
-    if (!option) return stage.treat && !stage.etchant ? "" : start + "nothing on record removes " + aim + " on this sample.";
+    if (!option) return start + "nothing on record removes " + aim + " on this sample.";
     return start + ew.viewOption.nameOf(shown, option) + (spoken ? ", " + option.verdict : "") + ", " + ew.viewOption.timesOf(option) + ".";
   }
 
@@ -88,15 +90,24 @@
     const { el } = ew.dom;
     const hooks = ew.hooks;
     const named = ew.viewOption.named(shown);
-    const aim = stage.target ? "Remove " + named(stage.target) : ew.strings.capital(String(stage.treat)) + (stage.etchant ? " in " + named(stage.etchant) : "");
+    const treatment = stage.treat ? ew.strings.capital(stage.treat) + (stage.etchant ? " in " + named(stage.etchant) : "") : "Etch";
+    const aim = stage.target ? "Remove " + named(stage.target) : treatment;
     const drawn = stage.options.slice(0, shown.state.drawn);
     const rest = stage.options.length - drawn.length;
     return el("section", { class: hooks.stage },
       el("h3", {}, (shown.plan.isSequence ? stage.step + ". " : "") + aim),
-      !stage.options.length && !(stage.treat && !stage.etchant) && el("p", {}, "Nothing on record does it on this sample; what is left out and why stands below."),
+      !stage.options.length && el("p", {}, emptyWords(stage)),
       el("ol", { class: hooks.options }, drawn.map((option) => ew.viewOption.item(shown, stage, option))),
       rest > 0 && ew.viewStack.button("Show " + Math.min(rest, ew.state.DRAWN) + " more of " + rest, () => shown.send({ type: "more" }), { id: ew.viewFields.idOf("more/" + stage.step) }),
       excluded(shown, stage));
+  }
+
+  /** Why a stage has no option. @param {StagePlan} stage */
+  function emptyWords(stage) {
+    if (stage.treat === "rinse" && !stage.etchant) return "In water.";
+    if (stage.treat && !stage.etchant) return "No liquid is named, so nobody knows what it does.";
+    if (!stage.target && !stage.treat) return "Nothing is left to etch: the depth asked for ends above it.";
+    return "Nothing on record does it on this sample; what is left out and why stands below.";
   }
 
   /** @param {any} shown @param {StagePlan} stage */

@@ -33,12 +33,13 @@
     const isTimed = option.mode === "run-to-time";
     return block("Times",
       el("p", { class: ew.hooks.cardBig }, isTimed ? "Run to time: " + time(plan.latestStopS, "up") : "First look: " + time(plan.firstLookS, "down") + "   Latest stop: " + time(plan.latestStopS, "up")),
-      el("p", {}, (isTimed ? "" : "Rinse at the first look, look or measure, then finish. ") + "Clears between " + time(plan.clearFirstS, "down") + " and " + time(plan.clearLastS, "up") + ". " + foundBy(shown, option)));
+      el("p", {}, (isTimed ? "If you look on the way: first after " + time(plan.firstLookS, "down") + ". " : "Rinse at the first look, look or measure, then finish. ") + "Clears between " + time(plan.clearFirstS, "down") + " and " + time(plan.clearLastS, "up") + ". " + foundBy(shown, option)));
   }
 
   /** @param {number} fraction */
   function percent(fraction) {
-    return ew.numbers.plain(fraction * 100).replace(/\.?0+$/, (/** @type {string} */ zeros) => (zeros.startsWith(".") ? "" : zeros)) + "\u00a0%";
+    const text = ew.numbers.plain(fraction * 100);
+    return (text.includes(".") ? text.replace(/\.?0+$/, "") : text) + "\u00a0%";
   }
 
   /** How the times were found. @param {any} shown @param {Option} option */

@@ -109,7 +109,7 @@
   function drawnLayer(shown, stage, option, film) {
     const isTarget = film === stage.stage.target && option.target !== null;
     const row = option.rows.find((one) => one.film === film.film && one.role === film.role && one.thicknessNm === film.thicknessNm);
-    const depth = stage.stage.sample.depthNm;
+    const depth = isTarget ? ew.sample.depthIn(stage.stage.sample, film) : null;
     const whole = depth === null || depth >= film.thicknessNm;
     const left = isTarget ? (whole ? 0 : 1 - /** @type {number} */ (depth) / film.thicknessNm) : leftOf(row, film.thicknessNm);
     const name = named(shown)(film.film);
