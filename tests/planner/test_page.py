@@ -91,7 +91,7 @@ def test_a_stack_is_built_by_keyboard(open_page: Open, http_root: str) -> None:
         page.locator(f"#{field}").focus()
         page.locator(f"#{field}").select_option(value)
     expect(_best(page)).to_contain_text("buffered HF")
-    expect(_said(page)).to_contain_text("look")
+    expect(_said(page)).to_contain_text("holds, run to time")
     page.locator("#plan-layers-2-up").focus()
     keys.press("Enter")
     expect(page.locator("#plan-layers-1-up")).to_be_focused()
