@@ -65,6 +65,9 @@ _NOTES: dict[str, Sentence] = {
     NoteCode.DRAFT: lambda p: "The recipe is a draft: nobody has called it proven.",
     NoteCode.CONFLICT: lambda p: "Own runs and the literature contradict each other; the own runs count.",
     NoteCode.FAR: lambda p: "Own runs were at another temperature and do not count here.",
+    NoteCode.STALE: lambda p: (
+        f"The newest run of {p['film']} is {p['days']} days old: run a monitor wafer first."
+    ),
     NoteCode.ALL_TEMPERATURES: lambda p: "No temperature is asked for: the rates span all on record.",
     NoteCode.TIME_OUTSIDE_RUNS: lambda p: (
         f"The runs lasted {between(time_of(p, 'low_s'), time_of(p, 'high_s'))}; "

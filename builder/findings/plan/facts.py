@@ -91,7 +91,8 @@ class OwnFact:
     What a recipe's own runs say of a film.
 
     `limit_s` is the longest tested time where every run shows no loss above its uncertainty. The spans
-    cover the runs in use; None where no run states the condition.
+    cover the runs in use; None where no run states the condition. `stale_days` is the age of the newest
+    run where the lab calls it too old.
     """
 
     levels: tuple[LevelBand, ...]
@@ -103,6 +104,7 @@ class OwnFact:
     load_cm2: Span | None = None
     window_nm: Span | None = None
     induction_s: float | None = None
+    stale_days: int | None = None
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -32,7 +32,7 @@ def gather(records: LabRecords, today: datetime.date, extra_levels: Sequence[flo
         defaults=defaults_of(records.settings),
         films={id: _film(film) for id, film in sorted(records.films.items())},
         etchants={id: etchant_facts(records, etchant) for id, etchant in sorted(records.etchants.items())},
-        etches={id: etch_facts(records, etch, levels) for id, etch in sorted(records.etches.items())},
+        etches={id: etch_facts(records, etch, levels, today) for id, etch in sorted(records.etches.items())},
         refused={id: _refused(records, tool) for id, tool in sorted(records.tools.items())},
         couples=tuple(
             CoupleFact(

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import datetime
 from collections.abc import Iterable, Mapping, Sequence
 
 from builder.findings.own_rates import OwnRate, at_confidence, films_run, own_rate
@@ -16,7 +17,7 @@ _ZERO_DEGC_K = 273.15
 _NM_PER_UM = 1000.0
 
 
-def etch_facts(records: LabRecords, etch: Etch, levels: Sequence[float]) -> EtchFacts:
+def etch_facts(records: LabRecords, etch: Etch, levels: Sequence[float], today: datetime.date) -> EtchFacts:
     etchant = records.etchants[etch.etchant]
     defaults = defaults_of(records.settings)
     own = {film: rate for film in films_run(records, etch) if (rate := own_rate(records, etch, film))}
@@ -43,9 +44,7 @@ def etch_facts(records: LabRecords, etch: Etch, levels: Sequence[float]) -> Etch
         ),
         gas=of_recipe_by_film(records, etch), forbidden=forbidden,
         cautions=cautions,
-        own={
-            film: fact for film, rate in own.items() if (fact := _own(records, rate, levels)) is not None
-        },
+        own=_owns(records, own, levels, today),
         clearing=etch.clearing, if_not_cleared=etch.if_not_cleared,
     )  # fmt: skip
 
@@ -74,7 +73,14 @@ def _waits(etch: Etch, own: Mapping[str, OwnRate]) -> tuple[float, float]:
     return offset, max(0.0, -offset)
 
 
-def _own(records: LabRecords, rate: OwnRate, levels: Sequence[float]) -> OwnFact | None:
+def _owns(
+    records: LabRecords, own: Mapping[str, OwnRate], levels: Sequence[float], today: datetime.date
+) -> dict[str, OwnFact]:
+    facts = ((film, _own(records, rate, levels, today)) for film, rate in own.items())
+    return {film: fact for film, fact in facts if fact is not None}
+
+
+def _own(records: LabRecords, rate: OwnRate, levels: Sequence[float], today: datetime.date) -> OwnFact | None:
     if rate.next_run is None:
         return None
     bands = []
@@ -95,8 +101,13 @@ def _own(records: LabRecords, rate: OwnRate, levels: Sequence[float]) -> OwnFact
         ),
         load_cm2=_span(row.load_cm2 for row in rows),
         window_nm=_span(None if row.window_um is None else row.window_um * _NM_PER_UM for row in rows),
-        induction_s=rate.induction_s,
+        induction_s=rate.induction_s, stale_days=_stale_days(records, rate, today),
     )  # fmt: skip
+
+
+def _stale_days(records: LabRecords, rate: OwnRate, today: datetime.date) -> int | None:
+    age = min(((today - run.date).days for run in rate.used), default=0)
+    return age if age > records.settings.stale_after_days else None
 
 
 def _limit_time(rate: OwnRate) -> float:

@@ -179,6 +179,9 @@ def _notes(reach: Reaching, known: Evidence) -> Iterator[Remark]:
         yield Remark(NoteCode.CONFLICT)
     if known.far:
         yield Remark(NoteCode.FAR)
+    own = None if recipe is None else recipe.own.get(target.film)
+    if known.rank is Rank.OWN and own is not None and own.stale_days is not None:
+        yield Remark(NoteCode.STALE, {"film": target.film, "days": own.stale_days})
     if known.all_temperatures:
         yield Remark(NoteCode.ALL_TEMPERATURES)
     if is_isotropic(reach) and (recipe is None or recipe.ratio is None) and reach.stage.masks:

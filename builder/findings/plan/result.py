@@ -55,6 +55,7 @@ class NoteCode(StrEnum):
     DRAFT = "draft"
     CONFLICT = "conflict"
     FAR = "far"
+    STALE = "stale"
     ALL_TEMPERATURES = "all-temperatures"
     TIME_OUTSIDE_RUNS = "time-outside-runs"
     COUPLE_TARGET = "couple-target"

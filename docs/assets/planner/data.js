@@ -18,7 +18,7 @@
     transfer_s: 0, temperature: null, cycle_s: null, ratio: null, masks: [], own: {}, gas: {}, forbidden: [],
     cautions: [], clearing: "", if_not_cleared: "",
   };
-  const OWN = { limit_s: null, temperature: null, load_cm2: null, window_nm: null, induction_s: null };
+  const OWN = { limit_s: null, temperature: null, load_cm2: null, window_nm: null, induction_s: null, stale_days: null };
   const LEVEL = { mid: null };
   const ROW = { low: null, high: null, tested_s: null, temperature: null, per_cycle: false };
   const SAID = { temperature: null };

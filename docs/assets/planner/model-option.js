@@ -162,6 +162,10 @@
     }
     if (known.conflict) found.push(remark("conflict"));
     if (known.far) found.push(remark("far"));
+    const own = ew.planCaps.ownOfTarget(reach);
+    if (known.rank === "own" && own && own.stale_days !== null) {
+      found.push(remark("stale", { film: reach.stage.target.film, days: own.stale_days }));
+    }
     if (known.allTemperatures) found.push(remark("all-temperatures"));
     const noRatio = !recipe || recipe.ratio === null;
     if (isIsotropic(reach) && noRatio && ew.films.masksOf(reach.stage).length) found.push(remark("undercut-assumed"));

@@ -97,6 +97,7 @@
     draft: () => "The recipe is a draft: nobody has called it proven.",
     conflict: () => "Own runs and the literature contradict each other; the own runs count.",
     far: () => "Own runs were at another temperature and do not count here.",
+    stale: (p, named) => "The newest run of " + named(p.film) + " is " + p.days + " days old: run a monitor wafer first.",
     "all-temperatures": () => "No temperature is asked for: the rates span all on record.",
     "time-outside-runs": (p) =>
       "The runs lasted " + between(time(p.low_s), time(p.high_s)) + "; up to " + time(p.stop_s) +

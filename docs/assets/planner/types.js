@@ -9,7 +9,7 @@
  * @typedef {{kind: string, low: number | null, high: number | null, sigma: number, rank: string, source: string, tested_s: number | null, temperature: Extent | null, per_cycle: boolean}} PublishedFact
  * @typedef {{effect: string, words: string, source: string, temperature: Extent | null}} SaidFact
  * @typedef {{confidence: number, low: number, mid: number | null, high: number}} LevelBand
- * @typedef {{levels: LevelBand[], runs: number, limits: number, times: Extent, limit_s: number | null, temperature: Extent | null, load_cm2: Extent | null, window_nm: Extent | null, induction_s: number | null}} OwnFact
+ * @typedef {{levels: LevelBand[], runs: number, limits: number, times: Extent, limit_s: number | null, temperature: Extent | null, load_cm2: Extent | null, window_nm: Extent | null, induction_s: number | null, stale_days: number | null}} OwnFact
  * @typedef {{forbidden: boolean, words: string, from_nm: number}} GasFact
  * @typedef {{id: string, name: string, method: string, state: string, isotropic: boolean, gas_bubbles: boolean, hf_vapour: boolean, temperature: Extent | null, hazard: number, cautions: string[], rows: {[film: string]: PublishedFact[]}, said: {[film: string]: SaidFact[]}, gas: {[film: string]: GasFact[]}, alone: {[film: string]: GasFact[]}, bond: GasFact[]}} EtchantFacts
  * @typedef {{film: string, on: string[], longest_s: number}} MaskFact
