@@ -22,6 +22,7 @@ from builder.views.matrix_grid import (
     Pool,
     film_order,
     filters_of,
+    first_kind,
     grid_row,
     groups_of,
     heads_of,
@@ -77,6 +78,7 @@ def films_matrix(
         groups=groups_of(columns),
         rows=tuple(rows),
         filters=filters_of(records, columns, films),
+        kind=first_kind(columns),
         others=tuple(targets),
         data={"format": DATA_FORMAT, "kind": "loss", "texts": pool.texts, "rows": data},
     )

@@ -91,11 +91,16 @@ class Filters:
     families: tuple[Choice, ...]
     methods: tuple[Choice, ...]
     etchants: tuple[Choice, ...]
+    kinds: tuple[Choice, ...]
 
 
 @dataclass(frozen=True)
 class MatrixView:
-    """One matrix; `times` is empty where a cell does not depend on a time."""
+    """
+    One matrix; `times` is empty where a cell does not depend on a time.
+
+    `kind` is the kind of columns that the page's script leaves in at first, or empty for all.
+    """
 
     url: str
     title: str
@@ -110,6 +115,7 @@ class MatrixView:
     groups: tuple[HeadGroup, ...]
     rows: tuple[GridRow, ...]
     filters: Filters
+    kind: str
     others: tuple[Link, ...]
     data: dict[str, object]
 
@@ -234,6 +240,24 @@ def filters_of(records: LabRecords, columns: Sequence[Column], films: Iterable[s
         families=tuple(Choice(one, FAMILY_NAMES[one]) for one in FilmFamily if one in families),
         methods=tuple(Choice(one, name) for one, name in METHOD_NAMES.items() if one in methods),
         etchants=tuple(named),
+        kinds=_kinds(columns),
+    )
+
+
+def first_kind(columns: Sequence[Column]) -> str:
+    """Return the kind of columns to begin with: recipes, or all (empty) where all are of one kind."""
+    return RECIPE_COLUMN if len({column.kind for column in columns}) > 1 else ""
+
+
+def _kinds(columns: Sequence[Column]) -> tuple[Choice, ...]:
+    recipes = sum(column.kind == RECIPE_COLUMN for column in columns)
+    published = len(columns) - recipes
+    if not recipes or not published:
+        return (Choice("", f"all ({len(columns)})"),)
+    return (
+        Choice(RECIPE_COLUMN, f"this lab's recipes ({recipes})"),
+        Choice("", f"published too ({len(columns)})"),
+        Choice(PUBLISHED_COLUMN, f"published only ({published})"),
     )
 
 

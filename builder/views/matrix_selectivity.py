@@ -158,6 +158,7 @@ def _page(
         groups=groups_of(columns),
         rows=tuple(rows),
         filters=filters_of(records, columns, films),
+        kind="",
         others=(Link("Other targets", INDEX_URL),),
         data={"format": DATA_FORMAT, "kind": "selectivity", "texts": pool.texts, "rows": data},
     )

@@ -2,7 +2,9 @@
 /*
  * The matrices of films by etches: arrow keys walk the cells, row and column of the cell in focus are lit, its
  * evidence opens beside the table, filters narrow rows and columns, and the time can be chosen. What a cell
- * opens comes from the script element "ew-matrix-data". Without JavaScript the table reads as it stands.
+ * opens comes from the script element "ew-matrix-data". Columns that are left out are taken from the document,
+ * because a browser spends seconds on the styles of tens of thousands of hidden cells; a line says how many.
+ * Without JavaScript the table reads as it stands, with all its columns.
  */
 (function () {
   "use strict";
@@ -59,17 +61,27 @@
     const rows = Array.from(body.rows);
     const heads = Array.from(table.tHead.rows[1].cells).slice(1);
     const methods = Array.from(table.tHead.rows[0].cells).slice(1);
+    const cells = rows.map((row) => Array.from(row.cells).slice(1));
+    const width = table.querySelector("col[span]");
+    const leftOut = document.querySelector("[data-ew-left-out]");
+    let places = heads.map((head, place) => place);
     const timeChoice = form.querySelector("[data-ew-time]");
     const still = document.querySelector("[data-ew-still]");
     let current = null;
     let lit = [];
 
     const time = () => (timeChoice ? Number(timeChoice.value) : 0);
-    const dataOf = (cell) => data.rows[cell.parentElement.sectionRowIndex][cell.cellIndex - 1];
+    const headOf = (cell) => heads[places[cell.cellIndex - 1]];
+    const dataOf = (cell) => data.rows[cell.parentElement.sectionRowIndex][places[cell.cellIndex - 1]];
+
+    function unlight() {
+      lit.forEach((one) => one.classList.remove(LIT));
+      lit = [];
+    }
 
     function light(cell) {
-      lit.forEach((one) => one.classList.remove(LIT));
-      lit = [cell.parentElement, heads[cell.cellIndex - 1]].concat(rows.map((row) => row.cells[cell.cellIndex]));
+      unlight();
+      lit = [cell.parentElement, headOf(cell)].concat(rows.map((row) => row.cells[cell.cellIndex]));
       lit.forEach((one) => one.classList.add(LIT));
     }
 
@@ -82,7 +94,7 @@
     function evidence(cell, found) {
       const title = element("p", "", "ew-matrix-title");
       title.append(link(cell.parentElement.cells[0].querySelector("a")), " in ",
-        link(heads[cell.cellIndex - 1].querySelector("a")));
+        link(headOf(cell).querySelector("a")));
       panel.replaceChildren(title);
       if (!found) {
         const word = element("p", "", "ew-verdict ew-verdict-unmeasured");
@@ -116,7 +128,7 @@
       const raw = dataOf(cell);
       const found = raw ? told(data, raw, time()) : null;
       cell.setAttribute("aria-label", cell.parentElement.cells[0].textContent.trim() + " in "
-        + heads[cell.cellIndex - 1].textContent.trim() + ": " + (found ? found.said : "unmeasured"));
+        + headOf(cell).textContent.trim() + ": " + (found ? found.said : "unmeasured"));
       light(cell);
       evidence(cell, found);
     }
@@ -128,7 +140,7 @@
       cell.focus();
     }
 
-    const isShown = (cell) => cell && cell.tagName === "TD" && !cell.hidden && !cell.parentElement.hidden;
+    const isShown = (cell) => cell && cell.tagName === "TD" && cell.isConnected && !cell.parentElement.hidden;
 
     function next(cell, step) {
       let row = cell.parentElement.sectionRowIndex;
@@ -159,12 +171,11 @@
     function retime() {
       data.rows.forEach(function (line, index) {
         Object.keys(line).forEach(function (place) {
-          const cell = rows[index].cells[Number(place) + 1];
+          const cell = cells[index][Number(place)];
           const found = told(data, line[place], time());
           cell.classList.remove("ew-verdict-holds", "ew-verdict-borderline", "ew-verdict-lost", "ew-verdict-unmeasured");
           cell.classList.add("ew-verdict-" + found.verdict);
-          cell.querySelector("use").setAttribute("href", "#mark-" + found.verdict);
-          cell.lastChild.textContent = found.short;
+          cell.textContent = found.short;
         });
       });
       if (current) open(current);
@@ -176,7 +187,7 @@
         asked[field.getAttribute("data-ew-narrow")] = field.value.trim();
       });
       const words = plain(asked.film).split(/\s+/).filter(Boolean);
-      const columns = heads.map((head) => ["kind", "method", "etchant"].every(
+      const isIn = heads.map((head) => ["kind", "method", "etchant"].every(
         (name) => !asked[name] || head.getAttribute("data-" + name) === asked[name]));
       let shown = 0;
       rows.forEach(function (row) {
@@ -185,32 +196,55 @@
           || !words.every((word) => text.includes(word));
         if (!row.hidden) shown += 1;
       });
-      columns.forEach(function (isIn, index) {
-        if (heads[index].hidden === !isIn) return;
-        heads[index].hidden = !isIn;
-        rows.forEach((row) => { row.cells[index + 1].hidden = !isIn; });
-      });
-      span(columns);
+      place(heads.map((head, index) => index).filter((index) => isIn[index]));
       form.querySelector("[data-ew-matrix-count]").textContent = shown + " of " + rows.length + " films, "
-        + columns.filter(Boolean).length + " of " + columns.length + " etches";
+        + places.length + " of " + heads.length + " etches";
+      tellLeftOut(isIn, rows.length - shown);
       if (!isShown(current)) enter();
     }
 
+    /** Only these columns stand in the table. */
+    function place(wanted) {
+      if (wanted.join() === places.join()) return;
+      places = wanted;
+      const pick = (row, all) => row.replaceChildren(row.cells[0], ...wanted.map((index) => all[index]));
+      body.remove();
+      pick(table.tHead.rows[1], heads);
+      rows.forEach((row, index) => pick(row, cells[index]));
+      width.span = Math.max(wanted.length, 1);
+      span();
+      table.append(body);
+    }
+
+    /** What is left out is said, on paper too, so that nothing reads as if it were not there. */
+    function tellLeftOut(isIn, films) {
+      const count = (kind) => heads.filter(
+        (head, index) => !isIn[index] && head.getAttribute("data-kind") === kind).length;
+      const counted = [
+        [count("published"), "etch known", "etches known", " from published facts alone"],
+        [count("recipe"), "recipe", "recipes", " of this lab"], [films, "film", "films", ""],
+      ];
+      const words = counted.filter((one) => one[0]).map((one) => one[0] + " " + one[one[0] === 1 ? 1 : 2] + one[3]);
+      leftOut.textContent = "Left out of this view: " + words.join(", ") + ".";
+      leftOut.hidden = !words.length;
+    }
+
     /** The names of methods reach over the columns that are left. */
-    function span(columns) {
+    function span() {
       let from = 0;
       methods.forEach(function (method) {
-        const size = Number(method.dataset.size);
-        const left = columns.slice(from, from + size).filter(Boolean).length;
+        const end = from + Number(method.dataset.size);
+        const left = places.filter((index) => from <= index && index < end).length;
         method.hidden = !left;
         method.colSpan = Math.max(left, 1);
-        from += size;
+        from = end;
       });
     }
 
     /** The one cell that the Tab key reaches; the arrows lead on from there. */
     function enter() {
       if (current) current.removeAttribute("tabindex");
+      unlight();
       const row = rows.find((one) => !one.hidden);
       current = (row && Array.from(row.cells).find(isShown)) || null;
       if (current) current.tabIndex = 0;

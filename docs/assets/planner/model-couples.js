@@ -18,12 +18,13 @@
     const laterTargets = reach.stage.below.filter((film) => film.role === "target").map((film) => film.film);
     const wet = ew.evidence.distinct([...kept, reach.stage.target.film, ...laterTargets]).sort(byCode);
     const supposed = supposedFilms(found);
+    const pairs = pairsIn(reach.facts, reach.etching.etchant.id);
     wet.forEach(function (/** @type {string} */ one, /** @type {number} */ place) {
       for (const other of wet.slice(place + 1)) {
-        if (!isBattery(reach.facts, one, other) || (supposed.has(one) && supposed.has(other))) continue;
-        const record = coupleOf(reach.facts, one, other, reach.etching.etchant.id);
-        if (record) apply(record, [one, other], kept, result);
-        else cap(ew.films.remark("couple", { one: one, other: other }), [one, other], kept, result);
+        const pair = pairOf(reach.facts, pairs, one, other, reach.etching.etchant.id);
+        if (!pair.isBattery || (supposed.has(one) && supposed.has(other))) continue;
+        if (pair.record) apply(pair.record, [one, other], kept, result);
+        else cap(pair.remark, [one, other], kept, result);
       }
     });
     return result;
@@ -31,9 +32,30 @@
 
   /** Adhesion layers that may lie under a noble metal: one or another of them, so never a pair. @param {Case[]} found */
   function supposedFilms(found) {
-    const named = new Set(found.filter((one) => !one.film.assumed).map((one) => one.film.film));
-    const maybe = found.filter((one) => one.caps.some((cap) => cap.code === "under-noble")).map((one) => one.film.film);
-    return new Set(maybe.filter((film) => !named.has(film)));
+    const supposed = new Set();
+    for (const one of found) if (one.caps.some((cap) => cap.code === "under-noble")) supposed.add(one.film.film);
+    if (supposed.size) for (const one of found) if (!one.film.assumed) supposed.delete(one.film.film);
+    return supposed;
+  }
+
+  /** Pairs that have been looked up in an etchant. @param {Facts} facts @param {string} etchant */
+  function pairsIn(facts, etchant) {
+    let pairs = facts.pairs.get(etchant);
+    if (!pairs) facts.pairs.set(etchant, (pairs = new Map()));
+    return pairs;
+  }
+
+  /** What is known of two films in an etchant, looked up once. @param {Facts} facts @param {Map<string, Map<string, Pair>>} pairs @param {string} one @param {string} other @param {string} etchant */
+  function pairOf(facts, pairs, one, other, etchant) {
+    let ofOne = pairs.get(one);
+    if (!ofOne) pairs.set(one, (ofOne = new Map()));
+    let pair = ofOne.get(other);
+    if (!pair) {
+      const record = coupleOf(facts, one, other, etchant);
+      pair = { isBattery: isBattery(facts, one, other), record: record, remark: ew.films.remark("couple", { one: one, other: other }) };
+      ofOne.set(other, pair);
+    }
+    return pair;
   }
 
   /** Order of plain ids, the same in both languages. @param {string} one @param {string} other */

@@ -10,9 +10,15 @@
   /** Thickness taken for an adhesion layer that nobody named. Common practice, no source. */
   const IMPLIED_ADHESION_NM = 10;
 
+  /** @type {Remark[]} */
+  const NO_CAPS = [];
+  const NO_PARAMS = Object.freeze({});
+  /** @type {Partial<Case>} */
+  const PLAIN = Object.freeze({});
+
   /** @param {string} code @param {{[name: string]: any}} [params] @returns {Remark} */
   function remark(code, params) {
-    return { code: code, params: params || {} };
+    return { code: code, params: params || NO_PARAMS };
   }
 
   /** A film with some of it changed. @param {PlanFilm} film @param {Partial<PlanFilm>} change @returns {PlanFilm} */
@@ -91,8 +97,8 @@
 
   /** @param {PlanFilm} film @param {string} role @param {Exposure | null} byTimer @param {Exposure | null} byLook @param {Partial<Case>} [more] @returns {Case} */
   function makeCase(film, role, byTimer, byLook, more) {
-    const plain = { film: film, role: role, byTimer: byTimer, byLook: byLook, faces: 1, nextToTarget: false, liesOn: null, caps: [] };
-    return Object.assign(plain, more);
+    const { faces = 1, nextToTarget = false, liesOn = null, caps = NO_CAPS } = more || PLAIN;
+    return { film: film, role: role, byTimer: byTimer, byLook: byLook, faces: faces, nextToTarget: nextToTarget, liesOn: liesOn, caps: caps };
   }
 
   /** @param {Stage} stage */
@@ -159,14 +165,14 @@
     /** @type {Case[]} */
     const found = [];
     const sample = reach.stage.sample;
-    const inStack = new Set(sample.layers.map((film) => film.film));
-    const named = new Set([...inStack, ...sample.exposed.map((film) => film.film)]);
+    const isIn = (/** @type {PlanFilm[]} */ films, /** @type {string} */ id) => films.some((film) => film.film === id);
     for (const film of sample.exposed) {
       const faces = film.exposed === "both-faces" ? reach.facts.rules.two_faces : 1;
       found.push(makeCase(film, "exposed", reach.startTimer, reach.startLook, { faces: faces, liesOn: film.on }));
       // The film that a pad stands on: its edge is open all round the pad.
-      if (film.on !== null && film.on !== "none" && !named.has(film.on)) found.push(thinCase(reach, film.on, []));
-      else if (film.on !== null && inStack.has(film.on)) found.push(thinCase(reach, film.on, [], isPorous(reach, film.film) ? null : film));
+      const inStack = film.on !== null && isIn(sample.layers, film.on);
+      if (film.on !== null && film.on !== "none" && !inStack && !isIn(sample.exposed, film.on)) found.push(thinCase(reach, film.on, []));
+      else if (film.on !== null && inStack) found.push(thinCase(reach, film.on, [], isPorous(reach, film.film) ? null : film));
       if (reach.facts.films[film.film].noble) found.push(...underNoble(reach, film, film.on));
     }
     return found;
@@ -223,9 +229,9 @@
     const porous = isPorous(reach, film.film);
     const phi = reach.timing.cut.phi;
     const thickness = film.spentNm === null ? 0 : Math.max(0, film.thicknessNm - film.spentNm);
-    const through = (/** @type {Exposure | null} */ exposure) =>
-      exposure === null ? null : ew.times.below(exposure, band, thickness, film.tolerance, phi, porous);
-    return [through(timer), through(look)];
+    const below = timer === null ? null : ew.times.below(timer, band, thickness, film.tolerance, phi, porous);
+    if (look === timer) return [below, below];
+    return [below, look === null ? null : ew.times.below(look, band, thickness, film.tolerance, phi, porous)];
   }
 
   /** @param {Exposure | null} exposure @param {number} byS @returns {Exposure | null} */

@@ -6,6 +6,8 @@
 (function (ew) {
   "use strict";
 
+  /** Keys of remarks, made once for a remark that many rows share. @type {WeakMap<Remark, string>} */
+  const KEYS = new WeakMap();
   const MASK_FAILURES = new Set(["peels", "swells", "cracks"]);
 
   /** @param {string} method */
@@ -21,32 +23,50 @@
   function judge(reach, one, plan, extra, coupleLost) {
     const known = ew.films.known(reach, one.film.film);
     const allowed = allowedLoss(reach, one);
-    const phi = reach.timing.cut.phi;
-    const word = wordOf(reach, one, one.byTimer, plan.targetRank, allowed);
-    const wordLook = wordOf(reach, one, one.byLook, plan.targetRank, allowed);
+    const bounds = { targetRank: plan.targetRank, allowed: allowed, lostAbove: lostAbove(reach, one) };
+    const loss = lossOf(reach, one, known, one.byTimer);
+    const lossLook = one.byLook === one.byTimer ? loss : lossOf(reach, one, known, one.byLook);
+    const word = wordOf(reach, one, one.byTimer, known, loss, bounds);
+    const wordLook = lossLook === loss ? word : wordOf(reach, one, one.byLook, known, lossLook, bounds);
     const lost = coupleLost || lostOf(reach, one, known, plan.undercut);
     const lostLook = lost && lost.code === "line" ? lineLost(reach, plan.undercutByLook) : lost;
-    const caps = sortedCaps([...one.caps, ...capsOf(reach, one, known, plan), ...plan.caps, ...extra]);
+    const caps = sortedCaps(allCaps(one.caps, capsOf(reach, one, known, plan), plan.caps, extra));
     return {
       film: one.film.film, role: one.role, thicknessNm: one.film.thicknessNm, exposure: one.byTimer,
       exposureByLook: one.byLook,
-      loss: ew.times.loss(known.band, one.byTimer, phi, one.faces),
-      lossByLook: ew.times.loss(known.band, one.byLook, phi, one.faces),
+      loss: loss, lossByLook: lossLook,
       allowedNm: allowed, verdict: finalWord(word, one.byTimer, caps, lost), verdictByLook: finalWord(wordLook, one.byLook, caps, lostLook),
       ground: word.ground, groundByLook: wordLook.ground, rank: known.rank, effects: known.adverse, caps: caps,
       lost: lost, hint: known.hint, assumed: one.film.assumed, spentNm: one.film.spentNm, sources: known.sources,
     };
   }
 
-  /** What makes two remarks one, and their order. @param {Remark} remark */
+  /** @param {Remark[][]} lists @returns {Remark[]} */
+  function allCaps(...lists) {
+    const caps = [];
+    for (const list of lists) for (const cap of list) caps.push(cap);
+    return caps;
+  }
+
+  /** What makes two remarks one, and their order. @param {Remark} remark @returns {string} */
   function keyOf(remark) {
+    let key = KEYS.get(remark);
+    if (key === undefined) KEYS.set(remark, (key = madeKey(remark)));
+    return key;
+  }
+
+  /** @param {Remark} remark */
+  function madeKey(remark) {
     const pairs = Object.keys(remark.params).sort(ew.couples.byCode);
     return remark.code + "\u0000" + pairs.map((name) => name + "=" + remark.params[name]).join(", ");
   }
 
   /** Are these remarks known to differ by their codes alone? It saves making keys. @param {Remark[]} remarks */
   function differByCode(remarks) {
-    return remarks.every((one, place) => remarks.findIndex((other) => other.code === one.code) === place);
+    for (let place = 1; place < remarks.length; place += 1) {
+      for (let before = 0; before < place; before += 1) if (remarks[before].code === remarks[place].code) return false;
+    }
+    return true;
   }
 
   /** @param {Remark[]} remarks @returns {Remark[]} */
@@ -56,10 +76,16 @@
 
   /** @param {Remark[]} caps */
   function sortedCaps(caps) {
+    if (caps.length < 2) return caps;
+    const sorted = caps.sort(byKey);
+    return sorted.filter((one, place) => place + 1 === sorted.length || byKey(one, sorted[place + 1]) !== 0);
+  }
+
+  /** Order of remarks by their keys, which are made only where two codes are the same. @param {Remark} one @param {Remark} other */
+  function byKey(one, other) {
+    if (one === other) return 0;
     const byCode = ew.couples.byCode;
-    if (differByCode(caps)) return caps.sort((one, other) => byCode(one.code, other.code));
-    const keyed = new Map(caps.map((one) => [keyOf(one), one]));
-    return Array.from(keyed.keys()).sort(byCode).map((key) => /** @type {Remark} */ (keyed.get(key)));
+    return byCode(one.code, other.code) || byCode(keyOf(one), keyOf(other));
   }
 
   /** What a film may still lose, nm: as stated, or by the lab's default; null where neither says. @param {Reach} reach @param {Case} one */
@@ -89,25 +115,30 @@
     return one.nextToTarget ? ew.words.allowedUnder(thickness, rules) : ew.words.allowedOther(thickness, rules);
   }
 
-  /** The word of one film; of a family, the worst word of the films that may be meant. @param {Reach} reach @param {Case} one @param {Exposure | null} exposure @param {string} targetRank @param {number | null} allowed @returns {Word} */
-  function wordOf(reach, one, exposure, targetRank, allowed) {
-    const film = reach.facts.films[one.film.film];
-    const members = film.is_family ? ew.evidence.familyMembers(reach.facts, reach.etching, film, reach.asked) : [];
-    const words = [...members, ew.films.known(reach, film.id)].map((known) =>
-      wordOfEvidence(reach, one, exposure, targetRank, allowed, known),
-    );
-    return words.reduce((worst, word) => (ew.words.ORDER[word.verdict] > ew.words.ORDER[worst.verdict] ? word : worst));
+  /** @param {Reach} reach @param {Case} one @param {Evidence} known @param {Exposure | null} exposure */
+  function lossOf(reach, one, known, exposure) {
+    return ew.times.loss(known.band, exposure, reach.timing.cut.phi, one.faces);
   }
 
-  /** @param {Reach} reach @param {Case} one @param {Exposure | null} exposure @param {string} targetRank @param {number | null} allowed @param {Evidence} known @returns {Word} */
-  function wordOfEvidence(reach, one, exposure, targetRank, allowed, known) {
-    const anyLoss = allowed === Infinity;
+  /** The word of one film; of a family, the worst word of the films that may be meant. @param {Reach} reach @param {Case} one @param {Exposure | null} exposure @param {Evidence} known @param {Span} loss @param {Bounds} bounds @returns {Word} */
+  function wordOf(reach, one, exposure, known, loss, bounds) {
+    const film = reach.facts.films[one.film.film];
+    const own = wordOfEvidence(exposure, known, loss, bounds);
+    if (!film.is_family) return own;
+    const words = ew.evidence
+      .familyMembers(reach.facts, reach.etching, film, reach.asked)
+      .map((member) => wordOfEvidence(exposure, member, lossOf(reach, one, member, exposure), bounds));
+    return [...words, own].reduce((worst, word) => (ew.words.ORDER[word.verdict] > ew.words.ORDER[worst.verdict] ? word : worst));
+  }
+
+  /** @param {Exposure | null} exposure @param {Evidence} known @param {Span} loss @param {Bounds} bounds @returns {Word} */
+  function wordOfEvidence(exposure, known, loss, bounds) {
+    const anyLoss = bounds.allowed === Infinity;
     const grounds = {
-      rank: known.rank, targetRank: targetRank, attacked: known.attacked, adverse: known.adverse.length > 0,
+      rank: known.rank, targetRank: bounds.targetRank, attacked: known.attacked, adverse: known.adverse.length > 0,
       limitS: known.limitS,
     };
-    const lost = ew.times.loss(known.band, exposure, reach.timing.cut.phi, one.faces);
-    return ew.words.filmWord(lost, exposure, grounds, anyLoss ? null : allowed, lostAbove(reach, one), anyLoss);
+    return ew.words.filmWord(loss, exposure, grounds, anyLoss ? null : bounds.allowed, bounds.lostAbove, anyLoss);
   }
 
   /** A film too thin for a default is not better off than the thinnest one that has a default. @param {Reach} reach @param {Case} one */

@@ -20,33 +20,28 @@
     const best = bestWord(known.rank, caps, timing.schedule);
     const verdict = worstOf(rows, best, "verdict");
     const recipe = etching.recipe;
-    const option = {
+    /** @type {Remark[] | null} */
+    let noted = null;
+    /** @type {Remark[] | null} */
+    let missing = null;
+    return {
       recipe: recipe ? recipe.id : null, etchant: etching.etchant.id, method: reach.method, verdict: verdict,
       verdictByLook: worstOf(rows, best, "verdictByLook"), target: stage.target.film, targetRank: known.rank,
       targetBand: known.band, targetSources: known.sources, schedule: timing.schedule,
       mode: ew.times.endMode(facts, timing.schedule, verdict === "holds", Boolean(recipe && recipe.endpoint)),
       undercut: undercut, undercutByLook: undercutByLook, rows: rows, planCaps: caps,
-      notes: /** @type {Remark[]} */ ([]), unstated: /** @type {Remark[]} */ ([]),
+      // What only the options that are looked at need is made when it is first asked for.
+      get notes() {
+        return noted || (noted = ew.judging.distinctRemarks([...notes(reach, known), ...couples.notes]));
+      },
+      get unstated() {
+        return missing || (missing = ew.judging.distinctRemarks(unstated(reach, rows)));
+      },
       proven: Boolean(recipe && recipe.status === "proven" && known.rank === "own"),
       hazard: etching.etchant.hazard, hasMargin: hasMargin(facts, rows),
       phi: timing.cut.phi, offsetS: timing.cut.offsetS, overetch: timing.cut.overetch,
       later: laterOf(reach),
     };
-    whenAsked(option, "notes", () => ew.judging.distinctRemarks([...notes(reach, known), ...couples.notes]));
-    whenAsked(option, "unstated", () => ew.judging.distinctRemarks(unstated(reach, rows)));
-    return option;
-  }
-
-  /** What only the options that are looked at need is made when it is first asked for. @param {Option} option @param {"notes" | "unstated"} name @param {() => Remark[]} make */
-  function whenAsked(option, name, make) {
-    Object.defineProperty(option, name, {
-      configurable: true, enumerable: true,
-      get() {
-        const value = make();
-        Object.defineProperty(option, name, { value: value, enumerable: true });
-        return value;
-      },
-    });
   }
 
   /** The word before any film has spoken. @param {string} rank @param {Remark[]} caps @param {Schedule} schedule */
@@ -66,7 +61,7 @@
 
   /** @param {FilmRow[]} rows @param {string} best @param {"verdict" | "verdictByLook"} which */
   function worstOf(rows, best, which) {
-    return ew.words.worst(rows.map((row) => row[which]), best);
+    return rows.reduce((worst, row) => ew.words.worse(worst, row[which]), best);
   }
 
   /** When the target clears, with what fixes it. @param {Facts} facts @param {Etching} etching @param {Stage} stage @param {Evidence} known @returns {Timing} */
@@ -192,10 +187,12 @@
     const at = ew.evidence.at;
     /** @type {GasFact[]} */
     const found = [];
+    const add = (/** @type {PlanFilm} */ film, /** @type {GasFact[] | undefined} */ given) => {
+      if (given) for (const fact of given) if (fact.from_nm === 0 || film.thicknessNm > fact.from_nm) found.push(fact);
+    };
     for (const film of filmsOf(sample)) {
-      for (const facts of [at(own, film.film), at(etchant.gas, film.film)]) {
-        for (const fact of facts || []) if (fact.from_nm === 0 || film.thicknessNm > fact.from_nm) found.push(fact);
-      }
+      add(film, at(own, film.film));
+      add(film, at(etchant.gas, film.film));
     }
     if (sample.bond !== null && facts.bondPattern && facts.bondPattern.test(sample.bond)) found.push(...etchant.bond);
     if (!found.length) return found;

@@ -16,6 +16,7 @@
  * @typedef {{id: string, name: string, etchant: string, method: string, tool: string, status: string, inherits: boolean, targets: string[], phi: number, offset_s: number, transfer_s: number, overetch: number, endpoint: boolean, cooled: boolean, isotropic: boolean, temperature: Extent | null, cycle_s: number | null, ratio: Span | null, masks: MaskFact[], own: {[film: string]: OwnFact}, gas: {[film: string]: GasFact[]}, forbidden: string[], cautions: string[], clearing: string, if_not_cleared: string}} EtchFacts
  * @typedef {{id: string, name: string, family: string, is_family: boolean, members: string[], barrier: string, electrical: string | null, noble: boolean, similar: string[], adhesion: string[], names: string[], formula: string}} FilmFacts
  * @typedef {{films: string[], etchants: string[], effect: string, words: string, source: string, affects: string | null}} CoupleFact
+ * @typedef {{isBattery: boolean, record: CoupleFact | null, remark: Remark}} Pair two films in an etchant
  * @typedef {{rule: string, forbidden: boolean, words: string, pairs: string[][]}} MeetingFact
  * @typedef {{under_fraction: number, under_nm: number, other_fraction: number, other_nm: number, other_least_nm: number, reserve_resist_plasma_fraction: number, reserve_resist_plasma_nm: number, reserve_fraction: number, reserve_nm: number, none_below_nm: number}} Allowance
  * @typedef {{confidence: number, tolerance: number, phi_immersion: number, phi_bubbles: number, phi_vapour: number, phi_plasma: number, phi_cyclic: number, reaction_wet_s: number, reaction_plasma_s: number, allowance: Allowance}} Defaults
@@ -25,7 +26,7 @@
  * @typedef {Map<string, UnitsOf>} UnitTable
  * @typedef {{text: string, unit: string, form: string, value: number | null, halfWidth: number | null, low: number | null, high: number | null}} Quantity
  * @typedef {{etchant: EtchantFacts, recipe: EtchFacts | null, known: Map<string, Map<string, Evidence>>}} Etching `known` keeps the evidence found so far, by what was asked and film
- * @typedef {{format: number, as_of: string, defaults: Defaults, films: {[id: string]: FilmFacts}, etchants: {[id: string]: EtchantFacts}, etches: {[id: string]: EtchFacts}, refused: {[tool: string]: {[film: string]: string}}, couples: CoupleFact[], meetings: MeetingFact[], bondPattern: RegExp | null, families: FilmFacts[], etchings: Etching[], alone: Map<string, Etching>, tools: Map<string, string>, rules: Rules, quantiles: {confidence: number, quantile: number}[], units: UnitTable}} Facts
+ * @typedef {{format: number, as_of: string, defaults: Defaults, films: {[id: string]: FilmFacts}, etchants: {[id: string]: EtchantFacts}, etches: {[id: string]: EtchFacts}, refused: {[tool: string]: {[film: string]: string}}, couples: CoupleFact[], meetings: MeetingFact[], bondPattern: RegExp | null, families: FilmFacts[], etchings: Etching[], alone: Map<string, Etching>, pairs: Map<string, Map<string, Map<string, Pair>>>, standing: Map<string, (Excluded | null | undefined)[]>, tools: Map<string, string>, rules: Rules, quantiles: {confidence: number, quantile: number}[], units: UnitTable}} Facts
  * @typedef {{facts: Facts, reference: Facts, cards: {[recipe: string]: any}, samples: any[], sources: {[id: string]: string}, lab: string}} PlannerData
  *
  * @typedef {{confidence: number, temperature: Extent | null, key: string}} Asked `key` names the question
@@ -45,6 +46,7 @@
  * @typedef {{caps: Map<string, Remark[]>, lost: Map<string, Remark>, planCaps: Remark[], notes: Remark[]}} Coupling
  * @typedef {{targetRank: string, caps: Remark[], undercut: Span, undercutByLook: Span}} PlanCaps
  * @typedef {{rank: string, targetRank: string, attacked: boolean, adverse: boolean, limitS: number | null}} Grounds
+ * @typedef {{targetRank: string, allowed: number | null, lostAbove: number}} Bounds
  * @typedef {{verdict: string, ground: string}} Word
  * @typedef {{film: string, role: string, thicknessNm: number, exposure: Exposure | null, exposureByLook: Exposure | null, loss: Span, lossByLook: Span, allowedNm: number | null, verdict: string, verdictByLook: string, ground: string, groundByLook: string, rank: string, effects: string[], caps: Remark[], lost: Remark | null, hint: string | null, assumed: boolean, spentNm: number | null, sources: string[]}} FilmRow
  * @typedef {{recipe: string | null, etchant: string, method: string, verdict: string, verdictByLook: string, target: string | null, targetRank: string, targetBand: Band | null, targetSources: string[], schedule: Schedule, mode: string | null, undercut: Span, undercutByLook: Span, rows: FilmRow[], planCaps: Remark[], notes: Remark[], unstated: Remark[], proven: boolean, hazard: number, hasMargin: boolean, phi: number, offsetS: number, overetch: number, later: LaterTarget[]}} Option
