@@ -5,9 +5,12 @@ from __future__ import annotations
 import unicodedata
 from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
+from typing import TYPE_CHECKING
 
 from builder.problems import did_you_mean
-from builder.records.films import Film
+
+if TYPE_CHECKING:
+    from builder.records.films import Film
 
 _MOST_SHOWN = 5
 """Films named in one suggestion; a longer list is no help."""

@@ -157,13 +157,13 @@ def _ground(row: FilmRow) -> str:
     if row.loss.low is None:
         # A family with a member that nobody measured has no loss as a whole, but a member's word stands.
         return f"of the films it may be, {_OF_A_MEMBER[row.ground]}"
-    if row.allowed_nm is None or math.isinf(row.allowed_nm):
-        allowed = ""
-    else:
-        allowed = f" of {plain_length(row.allowed_nm)} allowed"
+    stated = None if row.allowed_nm is None or math.isinf(row.allowed_nm) else plain_length(row.allowed_nm)
     if row.ground is Ground.MILD_END_EXCEEDS:
         whole = " (all of it)" if row.loss.low >= row.thickness_nm else ""
-        return f"even the mild end takes {length_text(row.loss.low, None, None).with_unit}{whole}{allowed}"
+        least = length_text(row.loss.low, None, None).with_unit.removeprefix("at least ")
+        limit = "" if stated is None else f"; allowed is {stated}"
+        return f"even the mild end takes {least}{whole}{limit}"
+    allowed = "" if stated is None else f" of {stated} allowed"
     high = "an unknown amount" if row.loss.high is None else length_text(None, None, row.loss.high).with_unit
     return f"at worst {high.removeprefix('at most ')}{allowed}"
 

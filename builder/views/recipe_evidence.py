@@ -73,7 +73,7 @@ def _rates_in_words(own: OwnRate) -> str:
     parts = [f"{runs_text(len(own.runs))}, {len(own.used)} of them in the current series."]
     if rates:
         spread = rate_text(min(rates), None, max(rates))
-        parts.append(f"Their rates lie between {spread.with_unit}." if len(rates) > 1 else "")
+        parts.append(f"Their rates span {spread.with_unit}." if len(rates) > 1 else "")
     parts += [f"{words.capitalize()} on {day.isoformat()}." for day, words in own.events]
     if own.next_run is not None:
         shown = rate_text(own.next_run.lo_nm_per_s or None, None, own.next_run.hi_nm_per_s)

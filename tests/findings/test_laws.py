@@ -19,6 +19,7 @@ from builder.findings.plan.result import CapCode, LostCode
 from builder.findings.plan.sample import PlanFilm
 from builder.records.terms import Effect, Role
 from builder.views.plan_json import plan_data
+from tests.findings.fact_builder import rate
 from tests.findings.worlds import (
     LEVELS,
     Shipped,
@@ -184,7 +185,7 @@ def test_a_recalled_rate_of_the_target_caps_every_film(
     """Whatever is known of the films themselves."""
     world = data.draw(worlds)
     name = world.target.film
-    rows = world.facts.etchants[world.etchant].rows.get(name, ())
+    rows = world.facts.etchants[world.etchant].rows.get(name, ()) or (rate(100.0),)
     option = (
         world.with_own(name, None)
         .with_published(name, [replace(row, rank=Rank.UNCHECKED) for row in rows])

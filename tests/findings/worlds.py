@@ -274,7 +274,7 @@ def _films(draw: st.DrawFn, names: Sequence[str], role: Role) -> PlanFilm:
 def samples(draw: st.DrawFn, names: Sequence[str], target: str) -> PlanSample:
     """A sample with this target and other films by these names."""
     masks = draw(st.lists(_films(names, Role.MASK), max_size=2))
-    under = draw(st.lists(_films(names, Role.UNDER), max_size=3))
+    under = draw(st.lists(_films(names, Role.UNDER), min_size=1, max_size=3))
     exposed = draw(st.lists(_films(names, Role.EXPOSED), max_size=3))
     back = draw(st.none() | st.none() | _films(names, Role.BACK))
     thickness = draw(st.sampled_from(_THICKNESS[3:6]))

@@ -26,7 +26,7 @@ from builder.findings.plan.facts import (
     SaidFact,
     Span,
 )
-from builder.records.terms import Effect
+from builder.records.terms import Effect, Method
 
 _ADVERSE = frozenset(
     {Effect.PEELS, Effect.SWELLS, Effect.ROUGHENS, Effect.CRACKS, Effect.OXIDISES, Effect.RESIDUE}
@@ -80,6 +80,12 @@ class Etching:
     def own(self, film: str) -> OwnFact | None:
         """The recipe's own runs of a film."""
         return None if self.recipe is None else self.recipe.own.get(film)
+
+    @property
+    def temperature_of_rows(self) -> Span | None:
+        """Temperature that published rows must match; "the same conditions" of a plasma include theirs."""
+        is_same = self.recipe is not None and self.recipe.method in (Method.PLASMA, Method.CYCLIC)
+        return None if is_same and self.recipe is not None and self.recipe.inherits else self.temperature
 
     @property
     def temperature(self) -> Span | None:
@@ -160,7 +166,7 @@ def _family(members: Sequence[Evidence]) -> Evidence:
 
 
 def _of_film(facts: PlanFacts, etching: Etching, film: FilmFacts, asked: Asked) -> Evidence:
-    temperature = asked.temperature_k or etching.temperature
+    temperature = asked.temperature_k or etching.temperature_of_rows
     rows = _rows(etching, film.id)
     counting = [row for row in rows if matches(row.temperature, temperature)]
     said = _said(etching, film.id, temperature)

@@ -246,15 +246,18 @@ def unstated(reach: Reaching, rows: Sequence[FilmRow]) -> Iterator[Remark]:
 
 def ordered_rows(rows: Iterator[FilmRow]) -> tuple[FilmRow, ...]:
     """Worst first; of the adhesion layers that may lie under one noble metal, only the worst."""
+    listed = list(rows)
+    if len({(row.role, row.film, row.thickness_nm) for row in listed}) < len(listed):
+        # No two rows change places because they were listed so.
+        listed.sort(key=repr)
     ordered = sorted(
-        rows,
+        listed,
         key=lambda row: (
             -row.verdict.order,
             -row.verdict_by_look.order,
             row.role,
             row.film,
             row.thickness_nm,
-            repr(row),  # no two rows change places because they were listed so
         ),
     )
     kept: list[FilmRow] = []

@@ -91,7 +91,9 @@
   /** @param {Facts} facts @param {Etching} etching @param {FilmFacts} film @param {Asked} asked @returns {Evidence} */
   function ofFilm(facts, etching, film, asked) {
     const recipe = etching.recipe;
-    const temperature = asked.temperature || (recipe ? recipe.temperature : null);
+    // "The same conditions" of a plasma include the temperature of the published rows.
+    const isSame = recipe && recipe.inherits && (recipe.method === "plasma" || recipe.method === "cyclic");
+    const temperature = asked.temperature || (recipe && !isSame ? recipe.temperature : null);
     const rows = rowsOf(etching, film.id);
     const counting = rows.filter((row) => matches(facts, row.temperature, temperature));
     const said = saidOf(facts, etching, film.id, temperature);

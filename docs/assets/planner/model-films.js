@@ -11,7 +11,7 @@
   const IMPLIED_ADHESION_NM = 10;
 
   /** @type {Remark[]} */
-  const NO_CAPS = [];
+  const NO_CAPS = /** @type {any} */ (Object.freeze([]));
   const NO_PARAMS = Object.freeze({});
   /** @type {Partial<Case>} */
   const PLAIN = Object.freeze({});

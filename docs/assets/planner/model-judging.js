@@ -27,7 +27,7 @@
     const loss = lossOf(reach, one, known, one.byTimer);
     const lossLook = one.byLook === one.byTimer ? loss : lossOf(reach, one, known, one.byLook);
     const word = wordOf(reach, one, one.byTimer, known, loss, bounds);
-    const wordLook = lossLook === loss ? word : wordOf(reach, one, one.byLook, known, lossLook, bounds);
+    const wordLook = one.byLook === one.byTimer ? word : wordOf(reach, one, one.byLook, known, lossLook, bounds);
     const lost = coupleLost || lostOf(reach, one, known, plan.undercut);
     const lostLook = lost && lost.code === "line" ? lineLost(reach, plan.undercutByLook) : lost;
     const caps = sortedCaps(allCaps(one.caps, capsOf(reach, one, known, plan), plan.caps, extra));

@@ -197,7 +197,9 @@
     const allowed = isOpen ? "" : " of " + size(/** @type {number} */ (row.allowedNm)) + " allowed";
     if (row.ground === "mild-end-exceeds") {
       const whole = /** @type {number} */ (row.loss.low) >= row.thicknessNm ? " (all of it)" : "";
-      return "even the mild end takes " + numbers.withUnit(numbers.length(row.loss.low, null, null)) + whole + allowed;
+      const least = numbers.withUnit(numbers.length(row.loss.low, null, null)).replace(/^at least /, "");
+      const limit = isOpen ? "" : "; allowed is " + size(/** @type {number} */ (row.allowedNm));
+      return "even the mild end takes " + least + whole + limit;
     }
     const high = row.loss.high === null ? "an unknown amount" : numbers.withUnit(numbers.length(null, null, row.loss.high));
     return "at worst " + high.replace(/^at most /, "") + allowed;
