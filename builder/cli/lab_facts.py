@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import datetime
+import gc
 from pathlib import Path
 
 from builder.cli.options import print_problems, stop_on_errors
@@ -23,6 +24,8 @@ def lab_facts(
     # Without a given day it may be the clock's, so the store is good for one day only.
     key = key_of(lab, day or f"clock {datetime.date.today()}", confidence, reference_only=reference_only)
     facts = load(lab, key)
+    # The facts stay to the end: to look among them for rubbish again and again is time lost.
+    gc.freeze()
     if facts is None:
         facts = _from_records(lab, as_of, confidence, reference_only=reference_only)
         save(lab, key, facts)

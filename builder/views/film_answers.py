@@ -13,7 +13,7 @@ from builder.findings.recipe_times import UNKNOWN_DEPTH_NM, target_timing
 from builder.records.lab import LabRecords
 from builder.records.terms import Status
 from builder.views.link import Link
-from builder.views.number_text import NumberText, Rounding, time_text
+from builder.views.number_text import NumberText, times_text
 from builder.views.plan_words import RANK_WORDS
 from builder.views.recipe_answers import band_text, depth_text
 from builder.views.recipe_standing import is_stale, runs_text
@@ -99,4 +99,4 @@ def _published_times(computed: Computed, etchant: str, known: Evidence) -> str:
 def _times(first_s: float | None, latest_s: float | None) -> str:
     if latest_s is None:
         return "unknown"
-    return f"{time_text(first_s, Rounding.DOWN)} – {time_text(latest_s, Rounding.UP)}"
+    return times_text((first_s, latest_s))

@@ -10,6 +10,9 @@ from dataclasses import dataclass
 from decimal import ROUND_CEILING, ROUND_FLOOR, ROUND_HALF_EVEN, Decimal
 
 NO_BREAK = "\u00a0"
+# A line may break after a dash, even before a space that does not break; the word joiner forbids it.
+TO = f"{NO_BREAK}–\u2060{NO_BREAK}"
+_SPAN_TO = f" –\u2060{NO_BREAK}"
 UNKNOWN = "unknown"
 
 _READ_UNITS = {"degC": "°C", "um": "µm", "μm": "µm"}
@@ -139,7 +142,7 @@ def time_text(time_s: float | None, rounding: Rounding = Rounding.NEAREST) -> st
 def times_text(times_s: Sequence[float | None]) -> str:
     """Return a span of times, the earliest rounded down and the latest rounded up."""
     first, last = times_s[0], times_s[-1]
-    return f"{time_text(first, Rounding.DOWN)} – {time_text(last, Rounding.UP)}"
+    return f"{time_text(first, Rounding.DOWN)}{_SPAN_TO}{time_text(last, Rounding.UP)}"
 
 
 def plain_number(value: float, digits: int = _MOST_DIGITS) -> str:
@@ -227,7 +230,7 @@ def _interval(low: float, high: float) -> str:
         shown = [_shortened(low, step, Rounding.DOWN), _shortened(high, step, Rounding.UP)]
     else:
         shown = [_at(low, shared, Rounding.DOWN), _at(high, shared, Rounding.UP)]
-    return f"{NO_BREAK}–{NO_BREAK}".join(shown)
+    return TO.join(shown)
 
 
 def _step(low: float, high: float) -> int | None:

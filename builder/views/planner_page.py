@@ -21,6 +21,7 @@ SCRIPTS = (
     "model-judging",
     "model-caps",
     "model-option",
+    "model-offers",
     "model-plan",
     "model-sample",
     "numbers",

@@ -10,7 +10,7 @@ from builder.records.quantities import Quantity
 from builder.records.terms import PublishedConditions
 from builder.views.etchant_page import hazard_words
 from builder.views.link import Link
-from builder.views.number_text import as_recorded, as_written
+from builder.views.number_text import TO, as_recorded, as_written
 from builder.views.references import Fact, FilmRef, film_ref, known_facts, substance_link
 from builder.views.words import AFTER_STEP_NAMES, BATH_NAMES, yes_no_unknown
 
@@ -130,7 +130,7 @@ def _undercut(etch: Etch) -> str | None:
     if ratio is None:
         return None
     low, mid, high = as_recorded(ratio.low), as_recorded(ratio.mid), as_recorded(ratio.high)
-    return f"{mid} × the depth ({low} – {high}; {ratio.basis})"
+    return f"{mid} × the depth ({low}{TO}{high}; {ratio.basis})"
 
 
 def _published(etch: Etch) -> str | None:

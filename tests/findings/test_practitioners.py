@@ -70,7 +70,7 @@ def test_fine_lines_lose_their_footing_and_the_back_its_oxide(planned: Planned) 
     assert mask.endswith("and stands on nothing")
     back = row_of(option, "sio2-thermal-wet", Role.BACK)
     assert back.verdict is Verdict.LOST
-    assert "(all of it) of 100\N{NO-BREAK SPACE}nm allowed" in reason(back)
+    assert "2.0\N{NO-BREAK SPACE}µm (all of it)" in reason(back)
 
 
 def test_a_boron_doped_stop_is_not_judged_by_plain_silicon(planned: Planned) -> None:

@@ -2,10 +2,15 @@
 
 from __future__ import annotations
 
+import io
 import re
+from itertools import combinations
+from typing import Any
 
+import numpy as np
 import pytest
 from axe_playwright_python.sync_playwright import Axe
+from PIL import Image
 from playwright.sync_api import Page, expect
 
 from tests.browser import Open
@@ -15,6 +20,14 @@ _LOSSES = PAGES["matrix of losses"]
 _RATIOS = PAGES["selectivity of a film"]
 _PHONE = {"width": 360, "height": 780}
 _RULES = ["wcag2a", "wcag2aa", "wcag21a", "wcag21aa", "wcag22aa"]
+_MARKS = {
+    "holds": "ew-verdict-holds ew-grid-own",
+    "borderline": "ew-verdict-borderline ew-grid-own",
+    "lost": "ew-verdict-lost ew-grid-own",
+    "unmeasured": "",
+}
+# Share of the pixels by which two marks must differ to be told apart; common practice, no source.
+_LEAST_DIFFERENCE = 0.04
 _ROWS_KEPT = (
     "document.querySelectorAll('table[data-ew-matrix] tbody tr:nth-child(n+9)').forEach((r) => r.remove())"
 )
@@ -192,3 +205,90 @@ def test_without_script_the_table_reads(open_page: Open, any_root: str) -> None:
     assert page.locator("table[data-ew-matrix] td.ew-verdict-holds").count() > 30
     assert not page.locator("[data-ew-matrix-filters]").is_visible()
     assert not page.locator("[data-ew-evidence]").is_visible()
+    heads = page.locator("table[data-ew-matrix] thead tr:last-child th[data-kind]")
+    kinds = set(heads.filter(visible=True).evaluate_all("(all) => all.map((h) => h.dataset.kind)"))
+    assert kinds == {"recipe", "published"}
+
+
+def test_published_columns_are_left_out_at_first_and_said_so(open_page: Open, http_root: str) -> None:
+    """Recipes come first; what is left out is counted in words, on paper too, and one choice away."""
+    page = open_page(http_root + _LOSSES).page
+    heads = page.locator("table[data-ew-matrix] thead tr:last-child th[data-kind]")
+    cells = page.locator("table[data-ew-matrix] tbody tr:first-child td")
+    assert set(heads.evaluate_all("(all) => all.map((h) => h.dataset.kind)")) == {"recipe"}
+    recipes = heads.count()
+    told = page.locator("[data-ew-left-out]")
+    left = int((re.findall(r"(\d+) etches known from published facts alone", told.inner_text()) or ["0"])[0])
+    page.emulate_media(media="print")
+    assert told.is_visible()
+    page.emulate_media(media="screen")
+    page.locator("[data-ew-narrow='kind']").select_option("")
+    assert left > 80 and heads.count() == cells.count() == recipes + left
+    assert not told.is_visible()
+    page.locator("[data-ew-narrow='kind']").select_option("published")
+    assert heads.count() == left and f"{recipes} recipes of this lab" in told.inner_text()
+    cell = page.locator("table[data-ew-matrix] td.ew-grid-read").first
+    cell.click()
+    place = _place(page)[1]
+    assert page.locator(".ew-matrix-title a").nth(1).inner_text() == heads.nth(place - 1).inner_text()
+    page.locator("[data-ew-narrow='family']").select_option("oxide")
+    assert re.search(r"\d+ films", told.inner_text())
+
+
+def test_a_script_that_never_comes_leaves_the_table(open_page: Open, http_root: str) -> None:
+    """The table waits for its script for a few seconds only; then all its columns show."""
+    page = open_page("about:blank").page
+    page.route(
+        "**/javascripts/matrix.js", lambda route: route.fulfill(body="", content_type="text/javascript")
+    )
+    page.goto(http_root + _LOSSES)
+    expect(page.locator("table[data-ew-matrix] th[data-kind='published']").first).to_be_visible(timeout=9000)
+
+
+def test_no_number_is_wider_than_its_cell(open_page: Open, http_root: str) -> None:
+    """Columns have one width; every text fits in it at every time, on screen and on paper."""
+    page = open_page(http_root + _LOSSES).page
+    page.locator("[data-ew-narrow='kind']").select_option("")
+    wide = "(all) => all.filter((c) => c.scrollWidth > c.clientWidth).map((c) => c.textContent)"
+    cells = page.locator("table[data-ew-matrix] tbody td[class]")
+    for time in ("0", "1", "2", "3"):
+        page.locator("[data-ew-time]").select_option(time)
+        for media in ("screen", "print"):
+            page.emulate_media(media=media)  # type: ignore[arg-type]
+            assert cells.evaluate_all(wide) == [], (time, media)
+        page.emulate_media(media="screen")
+
+
+@pytest.mark.parametrize(
+    "options",
+    [{}, {"color_scheme": "dark"}, {"forced_colors": "active"}, {"media": "print"}],
+    ids=["light", "dark", "forced colours", "print"],
+)
+def test_marks_of_cells_are_told_apart_by_shape(
+    open_page: Open, http_root: str, options: dict[str, Any]
+) -> None:
+    """Seen in grey and without their text, cells of any two verdicts differ, and none is blank."""
+    given = dict(options)
+    media = given.pop("media", None)
+    page = open_page(http_root + _LOSSES, device_scale_factor=4, **given).page
+    if media:
+        page.emulate_media(media=media)
+    drawn = {name: _mark(page, css) for name, css in _MARKS.items()}
+    drawn["blank"] = np.full_like(drawn["holds"], drawn["holds"][0, 0])
+    alike = [
+        pair
+        for pair in combinations(drawn, 2)
+        if float(np.mean(np.abs(drawn[pair[0]] - drawn[pair[1]]) > 60)) < _LEAST_DIFFERENCE
+    ]
+    assert alike == []
+
+
+def _mark(page: Page, css: str) -> np.ndarray:
+    cell = page.locator("table[data-ew-matrix] tbody tr:first-child td:nth-child(2)")
+    cell.evaluate("(c, css) => { c.removeAttribute('class'); if (css) c.className = css; }", css)
+    cell.scroll_into_view_if_needed()
+    box = cell.bounding_box()
+    assert box is not None
+    clip = {"x": box["x"] + 3, "y": box["y"] + box["height"] / 2 - 7, "width": 16, "height": 13}
+    shot = page.screenshot(clip=clip)  # type: ignore[arg-type]
+    return np.asarray(Image.open(io.BytesIO(shot)).convert("L"), dtype=float)

@@ -19,6 +19,7 @@ from builder.views.number_text import (
     temperature_text,
     tick_text,
     time_text,
+    times_text,
 )
 
 _UNITS_NM = {"nm": 1.0, "µm": 1e3, "mm": 1e6}
@@ -32,7 +33,7 @@ def _triple(values: list[float]) -> tuple[float, float, float]:
 
 
 def _plain(text: str) -> str:
-    return text.replace("\u00a0", " ")
+    return text.replace("\u00a0", " ").replace("\u2060", "")
 
 
 def _significant_digits(text: str) -> int:
@@ -128,6 +129,12 @@ def test_units_never_part_from_their_numbers() -> None:
     texts = (shown.with_unit, shown.interval_with_unit, time_text(341.0), percent_text(0.03))
     assert [text for text in texts if " " in text] == []
     assert _plain(shown.full) == "100 nm/min (80 – 125 nm/min)"
+
+
+def test_no_line_ends_after_the_dash_of_an_interval() -> None:
+    """A word joiner follows the dash: Unicode's line breaking lets a line end after a bare dash."""
+    texts = (length_text(80.3, 100.0, 124.6).full, times_text((341.0, 400.0)))
+    assert [re.findall("–(.)", text) for text in texts] == [["\u2060"], ["\u2060"]]
 
 
 def test_other_quantities_by_hand() -> None:

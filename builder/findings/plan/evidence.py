@@ -70,12 +70,11 @@ NOTHING = Evidence(Rank.NONE)
 
 @dataclass(frozen=True, slots=True)
 class Etching:
-    """One etch to be judged: an etchant, and the recipe if it is one."""
+    """One etch to be judged: an etchant, and the recipe if it is one; `found` keeps what was looked up."""
 
     etchant: EtchantFacts
     recipe: EtchFacts | None
     found: dict[tuple[str, Asked], Evidence] = field(default_factory=dict, compare=False, repr=False)
-    """What was looked up before: a plan asks for the same film many times."""
 
     def own(self, film: str) -> OwnFact | None:
         """The recipe's own runs of a film."""
@@ -273,7 +272,6 @@ def _conflict(own: OwnFact, rows: Sequence[PublishedFact]) -> bool:
         return False
     level = at_level(own, REFERENCE_CONFIDENCE)
     band = published.band
-    # The intervals are compared on the rate itself: a common scale changes nothing about touching.
     return intervals_conflict((level.low, level.high), (band.low, band.high))
 
 

@@ -269,6 +269,7 @@
     form.hidden = false;
     panel.hidden = false;
     narrow();
+    table.setAttribute("data-ew-ready", "");
   }
 
   const table = document.querySelector("table[data-ew-matrix]");

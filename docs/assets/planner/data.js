@@ -47,7 +47,7 @@
       couples: (plain.couples || []).map((/** @type {any} */ one) => Object.assign({}, COUPLE, one)),
       families: Object.values(films).filter((film) => film.is_family),
       etchings: Object.values(etches).map((recipe) => ({ etchant: etchants[recipe.etchant], recipe: recipe, known: new Map() })),
-      alone: new Map(), pairs: new Map(), standing: new Map(),
+      alone: new Map(), couplings: new Map(), standing: new Map(),
       bondPattern: plain.bond_words ? new RegExp(plain.bond_words, "i") : null,
       tools: new Map(Object.entries(given.tools)), rules: given.rules, quantiles: given.quantiles, units: ew.units.tableOf(given.units),
     });

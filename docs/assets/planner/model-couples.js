@@ -9,22 +9,55 @@
   /** @type {{[effect: string]: number}} */
   const GRAVITY = { none: 0, undercut: 1, attacks: 2 };
 
-  /** @param {Reach} reach @param {Case[]} found @returns {Coupling} */
+  /** Couplings that are kept of one etchant; beyond that all of them are found anew. */
+  const MOST_KEPT = 32;
+  /** @type {Coupling} */
+  const DRY = { caps: new Map(), lost: new Map(), planCaps: [], notes: [] };
+
+  /** The couplings of an etch, found once for the same films in the same etchant: no rate and no time enters. @param {Reach} reach @param {Case[]} found @returns {Coupling} */
   function couplings(reach, found) {
+    if (!reach.isWet) return DRY;
+    const { couplings: known } = reach.facts;
+    const films = filmsThatMeet(reach, found);
+    let kept = known.get(reach.etching.etchant.id);
+    if (!kept) known.set(reach.etching.etchant.id, (kept = []));
+    const same = kept.find((one) => isSame(one.films, films));
+    if (same) return same.coupling;
+    const coupling = couplingsOf(reach, found);
+    if (kept.length >= MOST_KEPT) kept.length = 0;
+    kept.push({ films: films, coupling: coupling });
+    return coupling;
+  }
+
+  /** All that couplings depend on beside the etchant. @param {Reach} reach @param {Case[]} found */
+  function filmsThatMeet(reach, found) {
+    const films = [reach.stage.target.film];
+    for (const film of reach.stage.below) if (film.role === "target") films.push(film.film);
+    for (const one of found) films.push(one.film.assumed ? "assumed" : "named", isSupposed(one) ? "supposed" : "there", one.film.film);
+    return films;
+  }
+
+  /** @param {string[]} one @param {string[]} other */
+  function isSame(one, other) {
+    if (one.length !== other.length) return false;
+    for (let place = 0; place < one.length; place += 1) if (one[place] !== other[place]) return false;
+    return true;
+  }
+
+  /** @param {Reach} reach @param {Case[]} found @returns {Coupling} */
+  function couplingsOf(reach, found) {
     /** @type {Coupling} */
     const result = { caps: new Map(), lost: new Map(), planCaps: [], notes: [] };
-    if (!reach.isWet) return result;
     const kept = new Set(found.map((one) => one.film.film));
     const laterTargets = reach.stage.below.filter((film) => film.role === "target").map((film) => film.film);
     const wet = ew.evidence.distinct([...kept, reach.stage.target.film, ...laterTargets]).sort(byCode);
     const supposed = supposedFilms(found);
-    const pairs = pairsIn(reach.facts, reach.etching.etchant.id);
     wet.forEach(function (/** @type {string} */ one, /** @type {number} */ place) {
       for (const other of wet.slice(place + 1)) {
-        const pair = pairOf(reach.facts, pairs, one, other, reach.etching.etchant.id);
-        if (!pair.isBattery || (supposed.has(one) && supposed.has(other))) continue;
-        if (pair.record) apply(pair.record, [one, other], kept, result);
-        else cap(pair.remark, [one, other], kept, result);
+        if (!isBattery(reach.facts, one, other) || (supposed.has(one) && supposed.has(other))) continue;
+        const record = coupleOf(reach.facts, one, other, reach.etching.etchant.id);
+        if (record) apply(record, [one, other], kept, result);
+        else cap(ew.films.remark("couple", { one: one, other: other }), [one, other], kept, result);
       }
     });
     return result;
@@ -32,30 +65,14 @@
 
   /** Adhesion layers that may lie under a noble metal: one or another of them, so never a pair. @param {Case[]} found */
   function supposedFilms(found) {
-    const supposed = new Set();
-    for (const one of found) if (one.caps.some((cap) => cap.code === "under-noble")) supposed.add(one.film.film);
-    if (supposed.size) for (const one of found) if (!one.film.assumed) supposed.delete(one.film.film);
+    const supposed = new Set(found.filter(isSupposed).map((one) => one.film.film));
+    for (const one of found) if (!one.film.assumed) supposed.delete(one.film.film);
     return supposed;
   }
 
-  /** Pairs that have been looked up in an etchant. @param {Facts} facts @param {string} etchant */
-  function pairsIn(facts, etchant) {
-    let pairs = facts.pairs.get(etchant);
-    if (!pairs) facts.pairs.set(etchant, (pairs = new Map()));
-    return pairs;
-  }
-
-  /** What is known of two films in an etchant, looked up once. @param {Facts} facts @param {Map<string, Map<string, Pair>>} pairs @param {string} one @param {string} other @param {string} etchant */
-  function pairOf(facts, pairs, one, other, etchant) {
-    let ofOne = pairs.get(one);
-    if (!ofOne) pairs.set(one, (ofOne = new Map()));
-    let pair = ofOne.get(other);
-    if (!pair) {
-      const record = coupleOf(facts, one, other, etchant);
-      pair = { isBattery: isBattery(facts, one, other), record: record, remark: ew.films.remark("couple", { one: one, other: other }) };
-      ofOne.set(other, pair);
-    }
-    return pair;
+  /** @param {Case} one */
+  function isSupposed(one) {
+    return one.caps.some((cap) => cap.code === "under-noble");
   }
 
   /** Order of plain ids, the same in both languages. @param {string} one @param {string} other */

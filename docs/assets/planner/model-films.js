@@ -58,7 +58,7 @@
 
   /** Every film that should stay and that the etch reaches, or may reach. @param {Reach} reach @returns {Case[]} */
   function cases(reach) {
-    return [...around(reach), ...under(reach)].filter((one) => one.role !== "target" && isReached(one));
+    return around(reach).concat(under(reach)).filter((one) => one.role !== "target" && isReached(one));
   }
 
   /** Targets of later stages that the etch reaches, or may reach, in its overetch. @param {Reach} reach @returns {Case[]} */
@@ -87,7 +87,7 @@
 
   /** @param {Reach} reach */
   function around(reach) {
-    return [...masks(reach), ...edgesOfEarlierTargets(reach), ...exposed(reach), ...back(reach)];
+    return masks(reach).concat(edgesOfEarlierTargets(reach), exposed(reach), back(reach));
   }
 
   /** An exposure of nothing in the worst case is no exposure; one that nobody knows may be any. @param {Case} one */

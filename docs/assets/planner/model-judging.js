@@ -30,7 +30,9 @@
     const wordLook = one.byLook === one.byTimer ? word : wordOf(reach, one, one.byLook, known, lossLook, bounds);
     const lost = coupleLost || lostOf(reach, one, known, plan.undercut);
     const lostLook = lost && lost.code === "line" ? lineLost(reach, plan.undercutByLook) : lost;
-    const caps = sortedCaps(allCaps(one.caps, capsOf(reach, one, known, plan), plan.caps, extra));
+    /** @type {Remark[]} */
+    const caps = [];
+    for (const some of [one.caps, capsOf(reach, one, known, plan), plan.caps, extra]) addOrdered(caps, some);
     return {
       film: one.film.film, role: one.role, thicknessNm: one.film.thicknessNm, exposure: one.byTimer,
       exposureByLook: one.byLook,
@@ -39,13 +41,6 @@
       ground: word.ground, groundByLook: wordLook.ground, rank: known.rank, effects: known.adverse, caps: caps,
       lost: lost, hint: known.hint, assumed: one.film.assumed, spentNm: one.film.spentNm, sources: known.sources,
     };
-  }
-
-  /** @param {Remark[][]} lists @returns {Remark[]} */
-  function allCaps(...lists) {
-    const caps = [];
-    for (const list of lists) for (const cap of list) caps.push(cap);
-    return caps;
   }
 
   /** What makes two remarks one, and their order. @param {Remark} remark @returns {string} */
@@ -74,11 +69,16 @@
     return differByCode(remarks) ? remarks : Array.from(new Map(remarks.map((one) => [keyOf(one), one])).values());
   }
 
-  /** @param {Remark[]} caps */
-  function sortedCaps(caps) {
-    if (caps.length < 2) return caps;
-    const sorted = caps.sort(byKey);
-    return sorted.filter((one, place) => place + 1 === sorted.length || byKey(one, sorted[place + 1]) !== 0);
+  /** Put remarks into an ordered list, each once. @param {Remark[]} ordered @param {Remark[]} caps */
+  function addOrdered(ordered, caps) {
+    for (const cap of caps) {
+      let place = ordered.length;
+      let order = 1;
+      while (place > 0 && (order = byKey(ordered[place - 1], cap)) > 0) place -= 1;
+      if (place > 0 && order === 0) ordered[place - 1] = cap;
+      else if (place === ordered.length) ordered.push(cap);
+      else ordered.splice(place, 0, cap);
+    }
   }
 
   /** Order of remarks by their keys, which are made only where two codes are the same. @param {Remark} one @param {Remark} other */

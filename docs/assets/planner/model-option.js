@@ -195,7 +195,7 @@
       add(film, at(etchant.gas, film.film));
     }
     if (sample.bond !== null && facts.bondPattern && facts.bondPattern.test(sample.bond)) found.push(...etchant.bond);
-    if (!found.length) return found;
+    if (found.length < 2) return found;
     const unique = new Map(found.map((fact) => [fact.forbidden + "|" + fact.from_nm + "|" + fact.words, fact]));
     return Array.from(unique.values()).sort(
       (one, other) => Number(other.forbidden) - Number(one.forbidden) || ew.couples.byCode(one.words, other.words),
@@ -234,7 +234,7 @@
   function orderedRows(rows) {
     const order = ew.words.ORDER;
     const byCode = ew.couples.byCode;
-    const ordered = rows.slice().sort(
+    const ordered = rows.sort(
       (one, other) =>
         order[other.verdict] - order[one.verdict] || order[other.verdictByLook] - order[one.verdictByLook] ||
         byCode(one.role, other.role) || byCode(one.film, other.film) || one.thicknessNm - other.thicknessNm ||
