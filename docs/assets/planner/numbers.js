@@ -80,7 +80,7 @@
     // Both ends to the same place, unless that costs the small one its digits.
     const apart = low !== 0 && shared < FEWEST - 1 - exponent(low);
     const shown = apart ? [shortened(low, step, "down"), shortened(high, step, "up")] : [at(low, "down"), at(high, "up")];
-    return shown.join(NO_BREAK + "–" + NO_BREAK);
+    return shown.join(NO_BREAK + "–\u2060" + NO_BREAK);
   }
 
   /** @param {any[][]} units @param {number | null} low @param {number | null} mid @param {number | null} high */
