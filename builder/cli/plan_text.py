@@ -24,7 +24,7 @@ from builder.views.plan_words import (
     row_name,
     unstated_words,
 )
-from builder.views.test_piece import needs_test_piece, test_piece_words
+from builder.views.test_piece import needs_test_piece, piece_words
 
 WIDTH = 92
 _SHOWN_OPTIONS = 5
@@ -147,7 +147,7 @@ def _film(row: FilmRow, facts: PlanFacts) -> Iterator[str]:
     if hint := hint_words(row.hint):
         yield from _indented([f"Hint, decides nothing: {hint}."], 8)
     if row.verdict in (Verdict.BORDERLINE, Verdict.UNMEASURED):
-        piece = [test_piece_words(row, facts.films[row.film].family)] if needs_test_piece(row) else []
+        piece = [piece_words(row, facts.films[row.film].family)] if needs_test_piece(row) else []
         steps = [*dict.fromkeys(LIFTS[cap.code] for cap in row.caps), *piece]
         if steps:
             yield from _indented([f"To settle it: {'; '.join(steps)}."], 8)

@@ -20,17 +20,17 @@ def needs_test_piece(row: FilmRow) -> bool:
     return not row.rank.can_hold or row.ground in _SETTLED_BY_TEST
 
 
-def test_time_s(row: FilmRow) -> float:
+def piece_time_s(row: FilmRow) -> float:
     """Return how long a test piece should stay in: ten minutes, or the worst exposure if that is shorter."""
     if row.exposure is None or row.exposure.high_s <= 0:
         return TEST_S
     return min(TEST_S, row.exposure.high_s)
 
 
-def test_piece_words(row: FilmRow, family: FilmFamily | None = None) -> str:
+def piece_words(row: FilmRow, family: FilmFamily | None = None) -> str:
     """Return the test that would settle a film's word."""
     where = " on the same film as here" if row.role is Role.MASK else ""
-    time = time_text(test_time_s(row))
+    time = time_text(piece_time_s(row))
     return f"etch a test piece of {row.film}{where} for {time} and read {gauge_words(family)}"
 
 

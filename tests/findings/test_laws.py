@@ -33,7 +33,7 @@ from tests.findings.worlds import (
     words,
 )
 
-EXAMPLES = 200
+EXAMPLES = 100
 law = settings(max_examples=EXAMPLES, derandomize=True, deadline=None)
 """Examples for built and for shipped worlds each; the same ones on every run."""
 

@@ -14,7 +14,7 @@ from builder.findings.plan.sample import plan_sample
 from builder.records.samples import Sample
 from builder.records.terms import Origin
 from builder.views.plan_words import blocker, excluded_words, note_words, reason
-from builder.views.test_piece import needs_test_piece, test_piece_words
+from builder.views.test_piece import needs_test_piece, piece_words
 from tests.planner.random_samples import Case
 
 # Plain data that a browser can give too.
@@ -79,7 +79,7 @@ def _row(row: FilmRow, films: Mapping[str, FilmFacts]) -> Answer:
             _finite(row.spent_nm),
         ],
         "reason": reason(row),
-        "test": test_piece_words(row, films[row.film].family) if needs_test_piece(row) else "",
+        "test": piece_words(row, films[row.film].family) if needs_test_piece(row) else "",
     }
 
 
