@@ -53,7 +53,9 @@ def _write_markdown(site: FinishedSite, folder: Path) -> None:
     for page in site.pages:
         path = docs / f"{page.url.removesuffix('.html')}.md"
         path.parent.mkdir(parents=True, exist_ok=True)
-        path.write_text(f"# {page.title}\n\n{markdownify(page.html)}", encoding="utf-8")
+        # Our pages leave out end tags that HTML does not need; only this parser knows which.
+        body = markdownify(page.html, bs4_options="html5lib")
+        path.write_text(f"# {page.title}\n\n{body}", encoding="utf-8")
     (folder / "mkdocs.yml").write_text(
         "site_name: plain\nuse_directory_urls: false\ntheme: {name: material, font: false}\n"
         "plugins: [search]\nnav: [{Home: index.md}]\n",
