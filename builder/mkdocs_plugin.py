@@ -23,6 +23,7 @@ from mkdocs.structure.toc import AnchorLink, TableOfContents
 from builder import pipeline
 from builder.pages.exchange import MARKER
 from builder.pages.formulas import with_formulas
+from builder.pages.lean_text import lean_css, lean_html
 from builder.pages.method_figures import with_figures
 from builder.pages.page import FinishedSite, Page
 from builder.pages.shipped_files import find_docs, find_mkdocs_file, find_theme
@@ -30,6 +31,11 @@ from builder.problems import Problem, format_text
 
 _log = logging.getLogger("mkdocs.plugins.etchwright")
 _SECONDS_A_DAY = 86_400
+_KINDS = {
+    "recipes": "recipe", "films": "film", "etchants": "etchant", "chemicals": "chemical", "tools": "tool",
+    "safety/sheets": "bench sheet",
+}  # fmt: skip
+_STYLE_SHEETS = ("assets/etchwright.css", "assets/matrices.css", "assets/planner/planner.css")
 _EPOCH_DAY = date(1970, 1, 1)
 
 
@@ -112,12 +118,16 @@ class EtchwrightPlugin(BasePlugin[PluginConfig]):  # type: ignore[no-untyped-cal
         page.present_anchor_ids = {heading.anchor for heading in ours.headings}
         return ours.html
 
+    def on_post_page(self, output: str, *, page: HostPage, config: MkDocsConfig) -> str:
+        """Take out the indents of the theme, on pages that hold no preformatted text."""
+        return lean_html(output) if page.file.src_uri in self._pages else output
+
     def on_env(self, env: Any, *, config: MkDocsConfig, files: Files) -> None:
         """Add our own search entries; the theme's parser would take longer than the pages themselves."""
         search: Any = config.plugins.get("material/search") or config.plugins.get("search")
         if search is not None:
             search.search_index.entries += [
-                {"location": page.url, "title": page.found_as or page.title, "text": page.search_text}
+                {"location": page.url, "title": _found_as(page), "text": page.search_text}
                 for page in self._pages.values()
             ]
 
@@ -129,6 +139,9 @@ class EtchwrightPlugin(BasePlugin[PluginConfig]):  # type: ignore[no-untyped-cal
             path = Path(config.site_dir) / file.url
             path.parent.mkdir(parents=True, exist_ok=True)
             path.write_bytes(file.content)
+        for name in _STYLE_SHEETS:
+            path = Path(config.site_dir) / name
+            path.write_text(lean_css(path.read_text(encoding="utf-8")), encoding="utf-8")
         (Path(config.site_dir) / MARKER).touch()
 
 
@@ -163,6 +176,13 @@ def serve(lab_dir: Path, address: str) -> None:
     """Show a lab's site at `address` (host:port) and build it anew when a record changes, until stopped."""
     os.environ["NO_MKDOCS_2_WARNING"] = "1"
     serve_with_mkdocs(str(find_mkdocs_file(lab_dir)), dev_addr=address)
+
+
+def _found_as(page: Page) -> str:
+    """How a page is named among hits: a recipe, its etchant and its bench sheet may share their words."""
+    name = page.found_as or page.title
+    kind = _KINDS.get(page.url.rpartition("/")[0])
+    return name if kind is None or page.url.endswith("/index.html") else f"{name} ({kind})"
 
 
 def _source(url: str) -> str:

@@ -46,6 +46,9 @@ class Visit:
 Open = Callable[..., Visit]
 """Opens an address; keywords go to the browser's context (`color_scheme="dark"`, `viewport=…`)."""
 
+Windows = dict[str, Visit]
+"""Windows that stay open from test to test, by what they were opened with."""
+
 
 class _QuietServer(ThreadingHTTPServer):
     # A browser that leaves a page breaks its connections; that is no fault of a test.
@@ -116,26 +119,58 @@ def browser() -> Iterator[Browser]:
         chromium.close()
 
 
+@pytest.fixture(scope="session")
+def windows(browser: Browser) -> Iterator[Windows]:
+    """Windows that stay open from test to test: what pages share is loaded once."""
+    kept: Windows = {}
+    yield kept
+    for visit in kept.values():
+        visit.page.context.close()
+
+
 @pytest.fixture
-def open_page(browser: Browser) -> Iterator[Open]:
-    """Opens pages, each in a fresh context; an error a page's script throws fails the test at its end."""
-    visits: list[Visit] = []
+def open_page(browser: Browser, windows: Windows) -> Iterator[Open]:
+    """Opens pages, each in a window of its own; an error a page's script throws fails the test at its end."""
+    used: list[Visit] = []
 
     def open_(url: str, **options: Any) -> Visit:
-        context = browser.new_context(**{"viewport": DESKTOP, **options})
-        context.set_default_timeout(_TIMEOUT_MS)
-        visit = Visit(context.new_page())
-        visits.append(visit)
-        context.on("request", lambda request: visit.requests.append(request.url))
-        visit.page.on("pageerror", lambda error: visit.faults.append(str(error)))
-        visit.page.on("console", lambda message: _note(visit, message))
+        key = repr((sorted(options.items()), len(used)))
+        if key not in windows:
+            windows[key] = _window(browser, options)
+        visit = windows[key]
+        _clear(visit, options)
+        used.append(visit)
         visit.page.goto(url)
         return visit
 
     yield open_
-    for visit in visits:
-        visit.page.context.close()
-    assert [fault for visit in visits for fault in visit.faults] == []
+    assert [fault for visit in used for fault in visit.faults] == []
+
+
+def _clear(visit: Visit, options: dict[str, Any]) -> None:
+    """Leave nothing of the last test in a window: neither its page nor what it set or chose."""
+    page = visit.page
+    page.unroute_all()
+    page.goto("about:blank")
+    page.set_viewport_size(options.get("viewport", DESKTOP))
+    page.emulate_media(
+        media="null",
+        color_scheme=options.get("color_scheme", "light"),
+        forced_colors=options.get("forced_colors", "none"),
+        reduced_motion=options.get("reduced_motion", "no-preference"),
+    )
+    visit.requests.clear()
+    visit.faults.clear()
+
+
+def _window(browser: Browser, options: dict[str, Any]) -> Visit:
+    context = browser.new_context(**{"viewport": DESKTOP, **options})
+    context.set_default_timeout(_TIMEOUT_MS)
+    visit = Visit(context.new_page())
+    context.on("request", lambda request: visit.requests.append(request.url))
+    visit.page.on("pageerror", lambda error: visit.faults.append(str(error)))
+    visit.page.on("console", lambda message: _note(visit, message))
+    return visit
 
 
 def _note(visit: Visit, message: ConsoleMessage) -> None:

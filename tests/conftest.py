@@ -4,9 +4,11 @@ from __future__ import annotations
 
 from hypothesis import settings
 
-from tests.browser import any_root, browser, file_root, http_root, open_page, shipped_site
+from tests.browser import any_root, browser, file_root, http_root, open_page, shipped_site, windows
 
-__all__ = ["any_root", "browser", "file_root", "http_root", "open_page", "shipped_site"]
+__all__ = [
+    "any_root", "browser", "file_root", "http_root", "open_page", "shipped_site", "windows",
+]  # fmt: skip
 
 # A first call may import a library or a template; a deadline would fail on a busy machine only.
 settings.register_profile("etchwright", deadline=None)

@@ -17,6 +17,7 @@ from builder.views.plan_cap_words import LIFTS
 from builder.views.plan_words import (
     RANK_WORDS,
     blocker,
+    clearing_words,
     excluded_words,
     hint_words,
     note_words,
@@ -91,7 +92,11 @@ def _option(option: Option, facts: PlanFacts, *, in_full: bool) -> Iterator[str]
     recipe = facts.etches.get(option.recipe or "")
     if recipe is not None:
         yield from _indented(
-            [f"Cleared: {recipe.clearing}", f"If it has not cleared: {recipe.if_not_cleared}"]
+            [
+                f"Cleared: {recipe.clearing}",
+                clearing_words(option),
+                f"If it has not cleared: {recipe.if_not_cleared}",
+            ]
         )
     for row in option.rows:
         yield from _film(row, facts)

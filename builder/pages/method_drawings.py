@@ -157,7 +157,7 @@ def _words(axes: Axes) -> None:
     _spans(axes, rows, (ACCENT, ACCENT, LOST, QUIET))
     axes.axvline(10.0, color=INK, lw=1.4, ls=(0, (4, 3)))
     axes.text(10.0, 1.0, " allowed loss", transform=axes.get_xaxis_transform(), fontsize=8.0, va="bottom")
-    axes.text(0.4, -3.0, "nobody measured it", color=QUIET, fontsize=8.0, va="center")
+    axes.text(10.8, -3.0, "nobody measured it", color=QUIET, fontsize=8.0, va="center")
     axes.set_xlim(0.0, 26.0)
     name_axes(axes, "loss, nm", "")
 

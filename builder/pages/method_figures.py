@@ -11,10 +11,10 @@ from builder.pages.figure_style import ACCENT, HAIRLINE, INK, LOST, QUIET, empty
 from builder.pages.method_drawings import DRAWINGS
 
 _CALL = re.compile(r"<!--\s*figure\s+([a-z0-9-]+):\s*(.*?)\s*-->", re.DOTALL)
-_SIZE_IN = (6.2, 2.6)
+_SIZE_IN = (4.4, 2.6)
 # Names of intervals need room on the left, names of numbers do not.
-_NARROW = (0.075, 0.185, 0.9, 0.71)
-_WIDE = (0.31, 0.2, 0.66, 0.68)
+_NARROW = (0.09, 0.185, 0.885, 0.71)
+_WIDE = (0.38, 0.2, 0.58, 0.68)
 _WITH_NAMES = frozenset({"by-timer-by-look", "widening", "words"})
 _COLOURS = {INK: "ink", QUIET: "quiet", HAIRLINE: "hairline", ACCENT: "accent", LOST: "lost"}
 _ID = re.compile(r'(\bid="|xlink:href="#|url\(#)')

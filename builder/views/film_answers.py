@@ -22,9 +22,15 @@ from builder.views.references import etchant_link, recipe_link
 
 @dataclass(frozen=True)
 class EtchedBy:
-    """One etch that removes a film; `times` are first look and latest stop for `depth`."""
+    """
+    One etch that removes a film; `times` are first look and latest stop for `depth`.
+
+    `member` names the film of a family that it removes (else empty).
+    """
 
     etch: Link
+    member: str
+    is_retired: bool
     is_recipe: bool
     rate: NumberText
     rank: str
@@ -36,10 +42,19 @@ class EtchedBy:
 
 def etched_by(records: LabRecords, computed: Computed, film: str) -> tuple[EtchedBy, ...]:
     """Return what removes a film: recipes that have it as target, then etchants with a published rate."""
-    return (*_recipes(records, computed, film), *_etchants(records, computed, film))
+    return (*recipes_for(records, computed, film), *_etchants(records, computed, film))
 
 
-def _recipes(records: LabRecords, computed: Computed, film: str) -> Iterator[EtchedBy]:
+def recipes_for(records: LabRecords, computed: Computed, film: str) -> Iterator[EtchedBy]:
+    """Yield the recipes that remove a film, the proven ones first; for a family, those of its members."""
+    if not records.films[film].is_family:
+        yield from _recipes(records, computed, film, "")
+        return
+    for member in records.films[film].members:
+        yield from _recipes(records, computed, member, records.films[member].name)
+
+
+def _recipes(records: LabRecords, computed: Computed, film: str, member: str) -> Iterator[EtchedBy]:
     etches = [etch for etch in records.etches.values() if film in etch.targets]
     order = {Status.PROVEN: 0, Status.DRAFT: 1, Status.RETIRED: 2}
     for etch in sorted(etches, key=lambda one: (order[one.status], one.name.casefold())):
@@ -55,6 +70,8 @@ def _recipes(records: LabRecords, computed: Computed, film: str) -> Iterator[Etc
             remarks.append("drifts")
         yield EtchedBy(
             etch=recipe_link(records, etch.id),
+            member=member,
+            is_retired=etch.status is Status.RETIRED,
             is_recipe=True,
             rate=band_text(timing.band),
             rank=RANK_WORDS[timing.known.rank],
@@ -75,6 +92,8 @@ def _etchants(records: LabRecords, computed: Computed, film: str) -> Iterator[Et
     for _, _, etchant, known in sorted(found, key=lambda one: one[:3]):
         yield EtchedBy(
             etch=etchant_link(records, etchant),
+            member="",
+            is_retired=False,
             is_recipe=False,
             rate=band_text(known.band),
             rank=RANK_WORDS[known.rank],

@@ -3,13 +3,16 @@
 from __future__ import annotations
 
 from collections import Counter
+from collections.abc import Iterator
 from dataclasses import asdict, dataclass
 from datetime import date
 
 from builder.findings.computed import Computed
+from builder.records.films import Film
 from builder.records.lab import LabRecords
 from builder.records.terms import Status
 from builder.views.changes import ChangeRow, changed_rows, doubtful_rows
+from builder.views.film_answers import recipes_for
 from builder.views.link import PageKind, page_url
 from builder.views.number_text import in_words
 from builder.views.recipe_rows import NO_RUN, RecipeRow, recipe_rows
@@ -17,6 +20,15 @@ from builder.views.references import FilmRef, film_ref
 from builder.views.words import FAMILY_NAMES
 
 _LATEST = 6
+
+
+@dataclass(frozen=True)
+class HomeRecipe:
+    """A recipe that removes a film, with its times for its usual depth."""
+
+    name: str
+    target: str
+    words: str
 
 
 @dataclass(frozen=True)
@@ -29,6 +41,8 @@ class NamedPage:
     kind: str
     target: str
     recipes: int
+    is_family: bool = False
+    removed_by: tuple[HomeRecipe, ...] = ()
 
 
 @dataclass(frozen=True)
@@ -75,7 +89,7 @@ def home_page(records: LabRecords, computed: Computed) -> HomePage:
         title=records.settings.name,
         description=f"How to remove a film at {records.settings.name}, and what survives it.",
         search_text="home start what do you want to remove what must stay",
-        names=named_pages(records),
+        names=named_pages(records, computed),
         removable=_removable(records),
         latest=tuple(ran[:_LATEST]),
         stale=tuple(stale[:_LATEST]),
@@ -87,25 +101,10 @@ def home_page(records: LabRecords, computed: Computed) -> HomePage:
     )
 
 
-def named_pages(records: LabRecords) -> tuple[NamedPage, ...]:
-    """Return every film and etchant with its synonyms, for the typeahead."""
-    counts = Counter(
-        named
-        for etch in records.etches.values()
-        if etch.status is not Status.RETIRED
-        for named in {*(("film", film) for film in etch.targets), ("etchant", etch.etchant)}
-    )
-    films = [
-        NamedPage(
-            film.id,
-            in_words(film.name),
-            film.synonyms,
-            "film",
-            page_url(PageKind.FILM, film.id),
-            counts[("film", film.id)],
-        )
-        for film in records.films.values()
-    ]
+def named_pages(records: LabRecords, computed: Computed) -> tuple[NamedPage, ...]:
+    """Return every film and etchant with its synonyms, for the typeahead; films with what removes them."""
+    counts = Counter(etch.etchant for etch in records.etches.values() if etch.status is not Status.RETIRED)
+    films = [_named_film(records, computed, film) for film in records.films.values()]
     etchants = [
         NamedPage(
             one.id,
@@ -113,11 +112,40 @@ def named_pages(records: LabRecords) -> tuple[NamedPage, ...]:
             one.synonyms,
             "etchant",
             page_url(PageKind.ETCHANT, one.id),
-            counts[("etchant", one.id)],
+            counts[one.id],
         )
         for one in records.etchants.values()
     ]
     return tuple(sorted(films + etchants, key=lambda one: (one.name.casefold(), one.kind, one.id)))
+
+
+def _named_film(records: LabRecords, computed: Computed, film: Film) -> NamedPage:
+    films = {film.id, *film.members} if film.is_family else {film.id}
+    removed = [
+        etch
+        for etch in records.etches.values()
+        if etch.status is not Status.RETIRED and films & set(etch.targets)
+    ]
+    return NamedPage(
+        film.id,
+        in_words(film.name),
+        film.synonyms,
+        "film",
+        page_url(PageKind.FILM, film.id),
+        len(removed),
+        is_family=film.is_family,
+        removed_by=tuple(_removed_by(records, computed, film.id)),
+    )
+
+
+def _removed_by(records: LabRecords, computed: Computed, film: str) -> Iterator[HomeRecipe]:
+    seen = set()
+    for row in recipes_for(records, computed, film):
+        if row.etch.target in seen or row.is_retired:
+            continue
+        seen.add(row.etch.target)
+        words = (f"{row.times} for {row.depth}", row.rank, row.member, row.remark)
+        yield HomeRecipe(row.etch.text, row.etch.target, ", ".join(filter(None, words)))
 
 
 def _is_stale(row: RecipeRow, oldest: float) -> bool:

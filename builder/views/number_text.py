@@ -12,6 +12,7 @@ from decimal import ROUND_CEILING, ROUND_FLOOR, ROUND_HALF_EVEN, Decimal
 NO_BREAK = "\u00a0"
 # A line may break after a dash, even before a space that does not break; the word joiner forbids it.
 TO = f"{NO_BREAK}–\u2060{NO_BREAK}"
+_AT_ONCE = f"0{NO_BREAK}s"
 _SPAN_TO = f" –\u2060{NO_BREAK}"
 UNKNOWN = "unknown"
 
@@ -134,7 +135,8 @@ def time_text(time_s: float | None, rounding: Rounding = Rounding.NEAREST) -> st
         return UNKNOWN
     step = _timer_step(time_s)
     if time_s > 0.0 and step < 1.0:
-        return _joined(_placed(time_s, 1, rounding), "s")
+        text = _placed(time_s, 1, rounding)
+        return _joined("0" if text == "0.0" else text, "s")
     whole = int(_to_whole(time_s / step, rounding)) * int(step)
     return _clock(whole)
 
@@ -142,7 +144,8 @@ def time_text(time_s: float | None, rounding: Rounding = Rounding.NEAREST) -> st
 def times_text(times_s: Sequence[float | None]) -> str:
     """Return a span of times, the earliest rounded down and the latest rounded up."""
     first, last = times_s[0], times_s[-1]
-    return f"{time_text(first, Rounding.DOWN)}{_SPAN_TO}{time_text(last, Rounding.UP)}"
+    earliest = time_text(first, Rounding.DOWN)
+    return f"{'at once' if earliest == _AT_ONCE else earliest}{_SPAN_TO}{time_text(last, Rounding.UP)}"
 
 
 def plain_number(value: float, digits: int = _MOST_DIGITS) -> str:

@@ -18,9 +18,7 @@ _CAPS: dict[str, Sentence] = {
         + ("" if p["stop_s"] is None else f", and the etch may take {time_of(p, 'stop_s')}")
     ),
     CapCode.BACK: lambda p: "what covers the back is not stated, and the back is wet from the start",
-    CapCode.BARRIER: lambda p: (
-        f"{p['film']} is not known to be dense; what etches may pass it to {p['under']}"
-    ),
+    CapCode.BARRIER: lambda p: f"{p['under']} may be reached through it: nobody has shown that it is dense",
     CapCode.CARRIER_LOAD: lambda p: f"the carrier is bare {p['film']} too, and no run had such a load",
     CapCode.CONFLICT: lambda p: "one own run contradicts the literature",
     CapCode.COUPLE: lambda p: f"{p['one']} and {p['other']} are wet together; no record of that couple",

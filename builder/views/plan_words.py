@@ -46,6 +46,8 @@ ROLE_WORDS: dict[Role, str] = {
     Role.TARGET: "target",
 }
 
+ALL = "all of it"
+
 _GROUNDS: dict[Ground, str] = {
     Ground.ANY_LOSS_ACCEPTED: "it may vanish",
     Ground.NO_HIGH_END: "only a lowest rate is known; nothing bounds the loss",
@@ -158,14 +160,26 @@ def _ground(row: FilmRow) -> str:
         # A family with a member that nobody measured has no loss as a whole, but a member's word stands.
         return f"of the films it may be, {_OF_A_MEMBER[row.ground]}"
     stated = None if row.allowed_nm is None or math.isinf(row.allowed_nm) else plain_length(row.allowed_nm)
+    limit = "" if stated is None else f"; allowed is {stated}"
     if row.ground is Ground.MILD_END_EXCEEDS:
-        whole = " (all of it)" if row.loss.low >= row.thickness_nm else ""
-        least = length_text(row.loss.low, None, None).with_unit.removeprefix("at least ")
-        limit = "" if stated is None else f"; allowed is {stated}"
-        return f"even the mild end takes {least}{whole}{limit}"
-    allowed = "" if stated is None else f" of {stated} allowed"
-    high = "an unknown amount" if row.loss.high is None else length_text(None, None, row.loss.high).with_unit
-    return f"at worst {high.removeprefix('at most ')}{allowed}"
+        goes = min(row.loss.low, _left(row))
+        least = length_text(goes, None, None).with_unit.removeprefix("at least ")
+        return f"even the mild end takes {least}{f' ({ALL})' if takes_all(row, row.loss.low) else ''}{limit}"
+    if row.loss.high is None:
+        return "at worst an unknown amount" + ("" if stated is None else f" of {stated} allowed")
+    if takes_all(row, row.loss.high):
+        return f"at worst {ALL}{limit}"
+    high = length_text(None, None, row.loss.high).with_unit.removeprefix("at most ")
+    return f"at worst {high}" + ("" if stated is None else f" of {stated} allowed")
+
+
+def takes_all(row: FilmRow, loss_nm: float) -> bool:
+    """Tell whether a loss reaches what earlier steps have left of a film."""
+    return loss_nm >= _left(row)
+
+
+def _left(row: FilmRow) -> float:
+    return max(0.0, row.thickness_nm - (row.spent_nm or 0.0))
 
 
 def note_words(note: Remark) -> str:
@@ -203,6 +217,14 @@ def blocker(option: Option) -> str:
     if option.verdict is not row.verdict:
         return _without_films(option)
     return f"{_capital(row_name(row))} {verb[row.verdict]}: {reason(row)}."
+
+
+def clearing_words(option: Option) -> str:
+    """Return whose look the recipe's words on clearing describe, and what shows on this sample instead."""
+    seen = "As seen on this recipe's own wafers."
+    if option.bares is None:
+        return seen
+    return f"{seen} Under your target lies {option.bares}: expect its look, not that of another film."
 
 
 def _without_films(option: Option) -> str:

@@ -11,7 +11,7 @@ from builder.findings.plan.stored import plain
 from builder.records.lab import LabRecords
 from builder.records.terms import Origin
 from builder.records.unit_table import unit_table_json
-from builder.views.run_card import run_cards
+from builder.views.run_card import COLUMN_WORDS, run_cards
 
 FORMAT = 1
 """Version of the planner's data; a script of another version refuses it."""
@@ -45,6 +45,7 @@ def planner_data(records: LabRecords, facts: PlanFacts, reference: PlanFacts) ->
         "quantiles": quantiles(facts),
         "units": json.loads(unit_table_json()),
         "cards": {id: plain(card) for id, card in run_cards(records, facts).items()},
+        "legend": COLUMN_WORDS,
         "samples": [json.loads(sample.json_text) for _, sample in sorted(records.samples.items())],
         "sources": {id: source.title for id, source in sorted(records.sources.items())},
         "tools": {id: tool.name for id, tool in sorted(records.tools.items())},

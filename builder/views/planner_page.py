@@ -27,6 +27,8 @@ SCRIPTS = (
     "numbers",
     "strings",
     "section",
+    "names",
+    "may-lose",
     "sample-check",
     "sample-file",
     "address",

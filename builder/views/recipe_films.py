@@ -40,6 +40,14 @@ class SideFilms:
     lead: str
     rows: tuple[SideFilm, ...]
 
+    @property
+    def by_word(self) -> tuple[tuple[str, tuple[str, ...]], ...]:
+        """The names of the films that have each word, the worst word first: all that a sheet has room for."""
+        words = dict.fromkeys(row.verdict for row in self.rows)
+        return tuple(
+            (word, tuple(row.film.link.text for row in self.rows if row.verdict == word)) for word in words
+        )
+
 
 def side_films(records: LabRecords, computed: Computed, etch: Etch, timing: TargetTiming) -> SideFilms:
     """Return every film but the targets that anything is on record of in a recipe, worst first."""

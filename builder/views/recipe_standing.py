@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from dataclasses import dataclass
+from datetime import date
 
 from builder.findings.computed import Computed
 from builder.findings.own_rates import OwnRate
@@ -39,11 +40,12 @@ def runs_text(count: int) -> str:
     return "no run" if count == 0 else f"{count}{NO_BREAK}run{'' if count == 1 else 's'}"
 
 
-def days_ago(days: int) -> str:
-    """Return an age in days in words."""
+def age_text(day: date, today: date) -> str:
+    """Return how long before the records' day something was: a page is read on any other day."""
+    days = (today - day).days
     if days == 0:
-        return "today"
-    return f"{days}{NO_BREAK}day{'' if days == 1 else 's'} ago"
+        return "the day of these records"
+    return f"{days}{NO_BREAK}day{'' if days == 1 else 's'} before {today.isoformat()}"
 
 
 def is_stale(records: LabRecords, computed: Computed, own: OwnRate | None) -> bool:
@@ -57,7 +59,7 @@ def _facts(computed: Computed, etch: Etch, own: OwnRate | None) -> Iterator[str]
     if own is None or own.last_date is None:
         yield "no run of its target on record"
         return
-    yield f"newest run {own.last_date.isoformat()}, {days_ago((computed.today - own.last_date).days)}"
+    yield f"newest run {own.last_date.isoformat()}, {age_text(own.last_date, computed.today)}"
     since = f", since the {own.events[-1][1]} of {own.events[-1][0].isoformat()}" if own.events else ""
     yield f"{runs_text(len(own.used))} in the current series{since}"
 

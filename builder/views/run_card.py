@@ -39,17 +39,34 @@ COLUMNS = (
     "site_spread",
 )
 """Columns of a run table, as people write it; a test holds them to the schema."""
+COLUMN_WORDS = {
+    "prior": "What was done to the film before.",
+    "time_s": "Etch time, s.",
+    "before_nm": "Thickness before, nm.",
+    "after_nm": "Thickness after, nm.",
+    "u_nm": "Standard uncertainty (k = 1) of one thickness reading, nm.",
+    "temperature_degc": "Temperature of bath or chuck, degC.",
+    "load_cm2": "Exposed area of the film in the tool, cm2.",
+    "window_um": "Width of the opening, um.",
+    "bath_hours": "Hours since the bath was made.",
+    "wafers_since_clean": "Wafers etched since the chamber was cleaned.",
+    "event": "What begins a new series: clean, new bath, repair, new film lot.",
+    "site_spread": "Half-range of the loss over the wafer as a fraction of its mean.",
+}
+"""What a column holds whose name does not say it, in the schema's words; a test holds them to it."""
+_BY_PLAN = "by plan"
 _AT_THE_BENCH = ("Protective equipment", "Controls", "Besides")
 
 
 @dataclass(frozen=True)
 class CardStep:
-    """One step as it is set: name, time, settings in one line, remark."""
+    """One step as it is set: name, time, settings in one line, remark; `by_plan`: the plan sets the time."""
 
     name: str
     time: str
     settings: str
     note: str
+    by_plan: bool = False
 
 
 @dataclass(frozen=True)
@@ -59,7 +76,6 @@ class CardHazard:
     name: str
     wear: tuple[tuple[str, str], ...]
     first: tuple[tuple[str, str], ...]
-    trust: str
 
 
 @dataclass(frozen=True)
@@ -123,7 +139,7 @@ def _conditions(etch: Etch, facts: tuple[Fact, ...]) -> tuple[tuple[str, str], .
 
 def _step(step: StepRow) -> CardStep:
     settings = ", ".join(f"{fact.term} {fact.text}" for fact in step.settings)
-    return CardStep(step.name, step.time or "by plan", settings, in_words(step.note))
+    return CardStep(step.name, step.time or _BY_PLAN, settings, in_words(step.note), by_plan=not step.time)
 
 
 def _after(step: AfterRow) -> CardStep:
@@ -137,9 +153,10 @@ def _after(step: AfterRow) -> CardStep:
 def _hazard(block: PrecautionBlock) -> CardHazard:
     return CardHazard(
         name=block.name,
-        wear=tuple((fact.term, fact.text) for fact in block.facts if fact.term in _AT_THE_BENCH),
+        wear=tuple(
+            (fact.term, fact.text) for fact in (*block.wear, *block.facts) if fact.term in _AT_THE_BENCH
+        ),
         first=tuple((fact.term, fact.text) for fact in block.first),
-        trust=block.trust,
     )
 
 

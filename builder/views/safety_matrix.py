@@ -131,6 +131,6 @@ def side_name(records: LabRecords, side: Side) -> str:
     return getattr(record, "name", None) or side.text or name
 
 
-def chemical_head(chemical_id: str) -> Link:
-    """Return the head of a chemical's row or column: its id is short and unlike any other."""
-    return Link(chemical_id, page_url(PageKind.CHEMICAL, chemical_id))
+def chemical_head(records: LabRecords, chemical_id: str) -> Link:
+    """Return the head of a chemical's row or column."""
+    return Link(records.chemicals[chemical_id].name, page_url(PageKind.CHEMICAL, chemical_id))

@@ -55,10 +55,10 @@ def chemical_matrix(records: LabRecords) -> MatrixPage:
         lead=_LEAD,
         legend=MIXING_LEGEND,
         row_name="Chemical",
-        heads=tuple(chemical_head(one) for one in ids),
+        heads=tuple(chemical_head(records, one) for one in ids),
         rows=tuple(
             Row(
-                chemical_head(one),
+                chemical_head(records, one),
                 tuple(SELF if one == other else mixing_cell(pairs.get((one, other), ())) for other in ids),
             )
             for one in ids

@@ -52,6 +52,7 @@ class PrecautionBlock:
 
     name: str
     first: tuple[Fact, ...]
+    wear: tuple[Fact, ...]
     facts: tuple[Fact, ...]
     overrides: str
     trust: str
@@ -159,8 +160,8 @@ def precaution_block(records: LabRecords, precaution: Precaution) -> PrecautionB
             ("In the eye", precaution.first_action_eye),
             ("Breathed in", precaution.first_action_inhalation),
         ),
+        wear=known_facts(("Protective equipment", precaution.ppe)),
         facts=known_facts(
-            ("Protective equipment", precaution.ppe),
             ("Controls", precaution.controls),
             ("Alarms and checks", precaution.monitoring),
             ("Storage and waste", precaution.storage_and_waste),

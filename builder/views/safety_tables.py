@@ -86,6 +86,13 @@ class SafetyTables:
     films: tuple[MeetingRow, ...]
     containers: tuple[HoldingRow, ...]
 
+    @property
+    def never_meets(self) -> tuple[str, ...]:
+        """What it must never meet, groups by their name: the first thing to know about it."""
+        rows = [row for row in self.meetings if row.is_forbidden]
+        names = (row.words or ", ".join(link.text for link in row.others) for row in rows)
+        return tuple({name.casefold(): name for name in names}.values())
+
 
 def chemical_tables(records: LabRecords, chemical: Chemical) -> SafetyTables:
     """Return the tables of a chemical."""

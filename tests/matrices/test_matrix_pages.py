@@ -80,7 +80,7 @@ def test_a_cell_opens_its_evidence_with_the_way_to_its_records(open_page: Open, 
     )
     assert re.match(r"\.\./films/.+\.html$", targets[0]) and re.match(r"\.\./recipes/.+\.html$", targets[1])
     page.locator(".ew-matrix-title a").nth(1).click()
-    assert "/recipes/" in page.url
+    page.wait_for_url("**/recipes/*")
 
 
 def test_a_literature_cell_names_its_sources(open_page: Open, http_root: str) -> None:
@@ -89,7 +89,8 @@ def test_a_literature_cell_names_its_sources(open_page: Open, http_root: str) ->
     page.locator("table[data-ew-matrix] td.ew-grid-read").first.click()
     link = page.locator("[data-ew-evidence] a[href*='bibliography.html#']").first
     link.click()
-    assert page.locator(":target").count() == 1
+    page.wait_for_url("**/bibliography.html#*")
+    expect(page.locator(":target")).to_have_count(1)
 
 
 def test_an_unmeasured_cell_says_that_nobody_knows(open_page: Open, http_root: str) -> None:
@@ -196,6 +197,21 @@ def test_on_paper_nothing_is_cut_off_by_a_box(open_page: Open, http_root: str) -
     blank = page.locator("table[data-ew-matrix] tbody td:not([class])").first
     assert blank.evaluate("(e) => getComputedStyle(e).printColorAdjust") == "exact"
     assert not page.locator("[data-ew-matrix-filters]").is_visible()
+
+
+def test_on_paper_many_columns_fit_a_sheet_as_marks(open_page: Open, http_root: str) -> None:
+    """All recipes of the lab stand on an upright sheet, by their marks; few columns keep their numbers."""
+    page = open_page(http_root + _LOSSES, viewport={"width": 718, "height": 1000}).page
+    page.emulate_media(media="print")
+    table = page.locator("table[data-ew-matrix]")
+    cell = page.locator("table[data-ew-matrix] td.ew-grid-own").first
+    assert page.locator("table[data-ew-matrix] thead th[data-kind]").count() > 30
+    assert table.evaluate("(e) => e.getBoundingClientRect().width") <= 718
+    assert cell.evaluate("(e) => getComputedStyle(e).fontSize") == "0px"
+    page.emulate_media(media="screen")
+    page.locator("[data-ew-narrow='method']").select_option("vapour")
+    page.emulate_media(media="print")
+    assert cell.evaluate("(e) => parseFloat(getComputedStyle(e).fontSize)") > 4
 
 
 def test_without_script_the_table_reads(open_page: Open, any_root: str) -> None:

@@ -6,7 +6,7 @@ import json
 from pathlib import Path
 
 import pytest
-from playwright.sync_api import Browser, Page
+from playwright.sync_api import Browser, Page, expect
 
 from builder.engine import Cut, RateBand, schedule
 from builder.views.number_text import Rounding, time_text
@@ -92,6 +92,14 @@ def test_the_field_works_on_the_page(open_page: Open, any_root: str) -> None:
     """On the built page, from a server and a folder, the usual depth gives the answer above the field."""
     page = open_page(any_root + PAGES["recipe"]).page
     page.locator("[data-ew-depth-value]").fill("300")
-    answer = page.locator("[data-ew-depth-answer]").inner_text()
-    big = page.locator("#time ~ p .ew-big").first.inner_text()
-    assert f"latest stop at {big}." in answer
+    told = page.locator("[data-ew-depth-answer]")
+    big = page.locator("#time ~ p .ew-big")
+    usual = big.all_inner_texts()
+    expect(told).to_have_text(f"First look at {usual[0]}, latest stop at {usual[1]}.")
+    page.locator("[data-ew-depth-value]").fill("600")
+    expect(page.locator("[data-ew-for]")).to_have_text("600\xa0nm")
+    other = big.all_inner_texts()
+    assert other[0] != usual[0] and other[1] != usual[1]
+    expect(told).to_have_text(f"First look at {other[0]}, latest stop at {other[1]}.")
+    page.locator("[data-ew-depth-value]").fill("x")
+    assert big.all_inner_texts() == usual

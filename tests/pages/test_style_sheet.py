@@ -10,7 +10,11 @@ import numpy as np
 import pytest
 
 _ROOT = Path(__file__).resolve().parents[2]
-_CSS = (_ROOT / "docs" / "assets" / "etchwright.css").read_text(encoding="utf-8")
+_SHEETS = {
+    name: (_ROOT / "docs" / "assets" / f"{name}.css").read_text(encoding="utf-8")
+    for name in ("etchwright", "matrices")
+}
+_CSS = _SHEETS["etchwright"]
 _VERDICTS = ("holds", "borderline", "lost", "unmeasured")
 _TEXT = (*_VERDICTS, "ink", "quiet", "accent")
 
@@ -119,10 +123,10 @@ def _expanded(pattern: str, ends: tuple[str, ...]) -> set[str]:
 
 
 def test_every_class_is_listed_and_has_a_rule() -> None:
-    """A class in use is in the list at the head of the style sheet and has a rule; the list holds no more."""
-    head, rules = _CSS.split("*/", 1)
-    listed = set(re.findall(r"\bew-[a-z0-9-]*[a-z0-9]", head))
-    ruled = set(re.findall(r"\.(ew-[a-z0-9-]*[a-z0-9])", rules))
+    """A class in use is in the list at the head of a style sheet and has a rule; the lists hold no more."""
+    heads, rules = zip(*(sheet.split("*/", 1) for sheet in _SHEETS.values()), strict=True)
+    listed = set(re.findall(r"\bew-[a-z0-9-]*[a-z0-9]", "\n".join(heads)))
+    ruled = set(re.findall(r"\.(ew-[a-z0-9-]*[a-z0-9])", "\n".join(rules)))
     used = set(re.findall(r"(?<![a-z-])ew-[a-z0-9-]*[a-z0-9](?![a-z0-9-])", _sources()))
     built = (
         _expanded("ew-verdict-", _VERDICTS)
@@ -138,6 +142,7 @@ def test_every_class_is_listed_and_has_a_rule() -> None:
 
 
 def test_nothing_is_asked_from_outside() -> None:
-    """The style sheet loads nothing."""
-    assert "@import" not in _CSS
-    assert re.findall(r"url\((?!\"#)", _CSS) == []
+    """The style sheets load nothing."""
+    everything = "\n".join(_SHEETS.values())
+    assert "@import" not in everything
+    assert re.findall(r"url\((?!\"#)", everything) == []

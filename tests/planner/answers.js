@@ -35,6 +35,7 @@
       ],
       rows: one.rows.map(row),
       blocker: ew.strings.blocker(one, asIs),
+      cleared: ew.strings.clearingWords(one, asIs),
       notes: one.notes.map((note) => ew.strings.noteWords(note, asIs)),
       unstated: codes(one.unstated),
     };

@@ -21,6 +21,7 @@ from tests.browser import ROOT
 
 TODAY = datetime.date(2026, 11, 15)
 SCRIPTS = ROOT / "docs" / "assets" / "planner"
+TYPEAHEAD = ROOT / "docs" / "assets" / "javascripts" / "typeahead.js"
 ANSWERS = Path(__file__).with_name("answers.js")
 
 

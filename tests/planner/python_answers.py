@@ -13,7 +13,7 @@ from builder.findings.plan.result import FilmRow, Option, Remark, StagePlan
 from builder.findings.plan.sample import plan_sample
 from builder.records.samples import Sample
 from builder.records.terms import Origin
-from builder.views.plan_words import blocker, excluded_words, note_words, reason
+from builder.views.plan_words import blocker, clearing_words, excluded_words, note_words, reason
 from builder.views.test_piece import needs_test_piece, piece_words
 from tests.planner.random_samples import Case
 
@@ -59,6 +59,7 @@ def _option(option: Option, films: Mapping[str, FilmFacts]) -> Answer:
         ],
         "rows": [_row(row, films) for row in option.rows],
         "blocker": blocker(option),
+        "cleared": clearing_words(option),
         "notes": [note_words(note) for note in option.notes],
         "unstated": _codes(option.unstated),
     }

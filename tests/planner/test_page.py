@@ -35,6 +35,17 @@ _WINDOW: dict[str, Any] = {
     "goal": {"line": "50 um"},
     "limits": {"methods": ["wet"]},
 }
+_STACK: dict[str, Any] = {
+    "sample": "stack",
+    "layers": [
+        {"film": "resist-positive-a", "thickness": "1.4 um", "role": "mask"},
+        {"film": "sio2-thermal-wet", "thickness": "300 nm", "role": "target"},
+        {"film": "sin-lpcvd", "thickness": "150 nm", "role": "under", "allowed_loss": "10 nm"},
+        {"film": "si-100", "thickness": "525 um", "role": "under"},
+    ],
+    "back": {"film": "sio2-thermal-wet", "thickness": "300 nm", "allowed_loss": "any"},
+    "edge": "protected",
+}
 _LONGEST_CARDS = 5
 
 
@@ -233,7 +244,7 @@ def test_the_home_page_leads_here(open_page: Open, any_root: str) -> None:
     page.keyboard.press("Enter")
     page.get_by_label("What must stay?").fill("positive resist a")
     page.keyboard.press("Enter")
-    page.get_by_role("link", name="Plan it on this sample").click()
+    page.get_by_role("link", name="Plan it on your sample").click()
     expect(page.locator("#plan-layers-0-film")).to_have_value(re.compile("Silicon dioxide, thermal, wet"))
     expect(page.locator("#plan-also_exposed-0-film")).to_have_value(re.compile("Positive resist A"))
     expect(page.locator(".plan-notices")).to_contain_text("placeholders")
@@ -337,14 +348,17 @@ def test_the_run_card_holds_what_the_bench_needs(open_page: Open, http_root: str
         expect(card).to_contain_text(words)
     expect(card).to_contain_text(re.compile("version [0-9a-f]{12}"))
     header = (ROOT / "recipes" / "runs" / "oxide-bhf.csv").read_text(encoding="utf-8").splitlines()[1]
-    assert page.locator(".plan-card-line").all_inner_texts() == header.split(",")
+    lines = [text.split("\n") for text in page.locator(".plan-card-line").all_inner_texts()]
+    assert [line[0] for line in lines] == header.split(",")
+    assert [line for line in lines if len(line) > 1] == [["film", "sio2-thermal-wet"]]
     page.get_by_role("button", name="Close the card").click()
     expect(card).to_have_count(0)
     expect(page.get_by_role("button", name="Run card")).to_be_focused()
 
 
+@pytest.mark.parametrize("stack", ["short", "long"])
 def test_the_run_card_prints_on_one_sheet(
-    open_page: Open, http_root: str, lab: PlannerLab, data: dict[str, Any]
+    open_page: Open, http_root: str, lab: PlannerLab, data: dict[str, Any], stack: str
 ) -> None:
     """The longest cards there are fit on one sheet of A4, in black on white, with nothing of the site."""
     cards = data["cards"]
@@ -354,16 +368,12 @@ def test_the_run_card_prints_on_one_sheet(
     for id in longest:
         if len(sheets) == _LONGEST_CARDS:
             break
-        target = lab.facts.etches[id].targets[0]
-        file = {
-            "sample": "card",
-            "layers": [
-                {"film": target, "thickness": "200 nm", "role": "target"},
-                {"film": "si-100", "thickness": "525 um", "role": "under"},
-            ],
-            "steps": [{"etch": id}],
-        }
-        page.evaluate("(hash) => { location.hash = hash; }", _link(file))
+        target = {"film": lab.facts.etches[id].targets[0], "thickness": "200 nm", "role": "target"}
+        mask, _, *below = _STACK["layers"]
+        file: dict[str, Any] = {"sample": "card", "layers": [target, below[-1]]}
+        if stack == "long":
+            file = {**_STACK, "layers": [mask, target, *below]}
+        page.evaluate("(hash) => { location.hash = hash; }", _link({**file, "steps": [{"etch": id}]}))
         expect(page.locator("#plan-steps-0-etch")).to_have_value(id)
         if not page.locator(".plan-head").count() or not page.get_by_text("stop by").count():
             continue  # left out on this sample, or nobody knows its time: there is no card to print
@@ -379,3 +389,134 @@ def test_the_run_card_prints_on_one_sheet(
         "[...document.querySelectorAll('.plan-card .ew-mark')].map((m) => getComputedStyle(m).color)"
     )
     assert set(shades) == {"rgb(0, 0, 0)"}
+
+
+def _card_of(page: Page) -> str:
+    page.locator(".plan-head").first.click()
+    page.get_by_role("button", name="Run card").click()
+    return page.locator(".plan-card").inner_text().replace("\N{NO-BREAK SPACE}", " ")
+
+
+def test_the_card_tells_which_sample_and_what_its_own_numbers_mean(open_page: Open, http_root: str) -> None:
+    """The sample as typed, the planned time in its step, the look to expect, boxes to tick; no loose end."""
+    card = _card_of(open_page(http_root + _URL + _link(_STACK)).page)
+    for words in (
+        "Positive resist A (novolak type), 1.4 µm, mask, may lose 1.3 µm (lab's default)",
+        "Silicon nitride, LPCVD, stoichiometric, 150 nm, stays, may lose 10 nm\n",
+        "Silicon, single crystal (100), 525 µm, stays, not reached",
+        "Back: Silicon dioxide, thermal, wet grown, 300 nm, may vanish. Edge: protected. Each edge moves ",
+        "Etch, 3 min 20 s:",
+        "Under your target lies Silicon nitride, LPCVD, stoichiometric: expect its look",
+        "Never beyond the latest stop, 3 min 20 s in all, without a new plan.",
+        "Verify against the SDS; sources on the page of the chemical.",
+        "u_nm Standard uncertainty (k = 1) of one thickness reading",
+        "Protective equipment read:\n",
+        "Run by / date",
+    ):
+        assert words in card
+    assert "by plan" not in card
+    assert "sources below" not in card
+
+
+def test_a_card_for_look_and_finish_has_both_times_and_the_test_to_run(
+    open_page: Open, http_root: str
+) -> None:
+    """Where the timer alone does not do, the step says first look and latest stop; a test piece is named."""
+    file = {**_STACK, "steps": [{"etch": "oxide-rie"}]}
+    card = _card_of(open_page(http_root + _URL + _link(file)).page)
+    assert re.search(r"Etch, first look [\d a-z]+, latest stop [\d a-z]+:", card)
+    assert "What would settle it" in card
+    assert "Etch a test piece of" in card
+
+
+@pytest.mark.parametrize("way", ["mouse", "Enter", "Space"])
+def test_only_the_print_button_prints(open_page: Open, http_root: str, way: str) -> None:
+    """Showing the card opens no dialog; its own button does."""
+    page = open_page(http_root + _URL + _link(_WINDOW)).page
+    page.evaluate("() => { window.printed = 0; window.print = () => { window.printed += 1; }; }")
+    page.locator(".plan-head").first.click()
+    button = page.get_by_role("button", name="Run card")
+    if way == "mouse":
+        button.click()
+    else:
+        button.focus()
+        page.keyboard.press(way)
+    expect(page.get_by_role("button", name="Close the card")).to_be_focused()
+    assert page.evaluate("window.printed") == 0
+    page.get_by_role("button", name="Print the card").click()
+    assert page.evaluate("window.printed") == 1
+
+
+def test_drawing_and_table_say_the_same_loss(open_page: Open, http_root: str) -> None:
+    """One film has one worst loss wherever it stands, and none loses more than there is of it."""
+    page = open_page(http_root + _URL + _link(_STACK)).page
+    page.locator(".plan-head").first.click()
+    detail = page.locator(".plan-detail").first
+    told = str(detail.get_by_role("img", name=re.compile("^Section before")).get_attribute("aria-label"))
+    rows = {row.split("\n")[0]: row for row in detail.locator("tbody tr").all_inner_texts()}
+    for film in ("Positive resist A (novolak type)", "Silicon nitride, LPCVD, stoichiometric"):
+        drawn = re.search(re.escape(film) + r": at worst ([\d.]+\s\S+) gone", told)
+        assert drawn is not None
+        row = next(text for name, text in rows.items() if film in name)
+        assert f"At worst {drawn[1]} of" in row
+    assert "back: Silicon dioxide, thermal, wet grown: at worst all of it gone" in told
+    back = next(text for text in rows.values() if "may vanish" in text)
+    assert "loses all of it" in back
+    assert "336" not in back
+
+
+def test_a_field_left_empty_shows_what_counts(open_page: Open, http_root: str) -> None:
+    """The lab's default stands in the empty field and follows the thickness; a thin film has none."""
+    page = open_page(http_root + _URL + _link(_STACK)).page
+
+    def shown(field: str) -> str:
+        text = page.locator(f"#plan-{field}-allowed_loss").get_attribute("placeholder")
+        return str(text).replace("\N{NO-BREAK SPACE}", " ")
+
+    assert shown("layers-3") == "5.0 nm (lab's default)"
+    assert shown("layers-0") == "1.3 µm, in plasma 1.1 µm (lab's default)"
+    assert shown("layers-2") == "7.5 nm (lab's default)"
+    page.locator("#plan-layers-2-thickness").fill("400 nm")
+    assert shown("layers-2") == "10 nm (lab's default)"
+    page.locator("#plan-layers-2-thickness").fill("15 nm")
+    assert shown("layers-2") == "no default below 20 nm: say how much"
+
+
+def test_what_is_wrong_stays_in_view_and_moves_no_box(open_page: Open, http_root: str) -> None:
+    """Beside a long form the answers' head says what is missing; a fault leaves its line of boxes alone."""
+    page = open_page(http_root + _URL + _link(_STACK)).page
+    page.locator("#plan-layers-1-film").fill("termal oxyde")
+    page.keyboard.press("Escape")
+    fault = page.locator("#plan-layers-1-film-fault")
+    expect(fault).to_contain_text('there is no film "termal oxyde"; did you mean Silicon dioxide, thermal')
+    tops = [page.locator(f"#plan-layers-1-{name}").bounding_box() for name in ("film", "thickness")]
+    assert tops[0] is not None and tops[1] is not None
+    assert tops[0]["y"] == pytest.approx(tops[1]["y"], abs=1)
+    page.locator("#plan-mount-bond").scroll_into_view_if_needed()
+    page.mouse.wheel(0, 10_000)
+    expect(_best(page)).to_contain_text("did you mean")
+    expect(_best(page)).to_be_in_viewport(ratio=1)
+
+
+def test_a_phone_leads_from_the_line_to_the_answers(open_page: Open, http_root: str) -> None:
+    """The line at the bottom has a way to the answers; each film's reason is read without a sideways step."""
+    page = open_page(http_root + _URL + _link(_STACK), viewport=_PHONE).page
+    page.get_by_role("button", name="See the answers").click()
+    expect(page.locator("#plan-answers-title")).to_be_in_viewport()
+    expect(page.locator("#plan-answers-title")).to_be_focused()
+    page.locator(".plan-head").first.click()
+    box = page.locator(".plan-films-box").first
+    assert box.evaluate("(box) => box.scrollWidth <= box.clientWidth")
+    reason = box.locator("td").nth(2).bounding_box()
+    assert reason is not None and reason["x"] + reason["width"] <= _PHONE["width"]
+
+
+def test_a_typed_name_that_fits_one_film_is_taken(open_page: Open, http_root: str) -> None:
+    """Words in any order name the film when they fit only one, and the field shows which."""
+    page = open_page(http_root + _URL + _link(_STACK)).page
+    field = page.locator("#plan-layers-2-film")
+    field.fill("stoichiometric LPCVD nitride silicon")
+    page.keyboard.press("Escape")
+    page.keyboard.press("Tab")
+    expect(field).to_have_value("Silicon nitride, LPCVD, stoichiometric")
+    expect(_best(page)).to_contain_text("holds")

@@ -12,7 +12,7 @@ from playwright.sync_api import Page
 
 from builder.checking.sample_check import check_sample_data
 from builder.reading.raw import Positions, Raw
-from tests.planner.conftest import SCRIPTS, PlannerLab
+from tests.planner.conftest import SCRIPTS, TYPEAHEAD, PlannerLab
 
 _SOUND: dict[str, Any] = {
     "sample": "sound",
@@ -66,7 +66,9 @@ _SET = {
     "unknown etchant": ("limits/etchants", ["cola"]),
     "below absolute zero": ("limits/temperature", "-300 degC"),
     "temperature without unit": ("temperature", "20"),
-    "room, which only tables say": ("temperature", "room"),
+    "at room temperature": ("temperature", "room"),
+    "treated at room temperature": ("steps/0/temperature", "room"),
+    "a limit in words": ("limits/temperature", "room"),
     "unknown recipe": ("steps/1/etch", "magic"),
     "a recipe": ("steps/1/etch", "oxide-bhf"),
     "neither": ("steps/1/etch", None),
@@ -96,7 +98,8 @@ def _changed(place: str, value: object) -> dict[str, Any]:
 @pytest.fixture(scope="module")
 def check(model: Page, data: dict[str, Any]) -> Callable[[dict[str, Any]], list[dict[str, str]]]:
     """What the page says against a sample file."""
-    for name in ("sample-check", "sample-file"):
+    model.add_script_tag(path=TYPEAHEAD)
+    for name in ("names", "sample-check", "sample-file"):
         model.add_script_tag(path=SCRIPTS / f"{name}.js")
     model.evaluate("(given) => { window.data = etchwright.data.read(given); }", data)
 

@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
+import json
 import re
 from pathlib import Path
 
 import pytest
 
 from builder.views.planner_page import SCRIPTS
-from builder.views.run_card import COLUMNS
+from builder.views.run_card import COLUMN_WORDS, COLUMNS
 from tests.browser import ROOT
 from tests.planner.conftest import SCRIPTS as FOLDER
 
@@ -77,3 +78,13 @@ def test_the_card_has_the_columns_of_a_run_table() -> None:
     """What is written down at the bench goes into the table column by column."""
     header = (ROOT / "recipes" / "runs" / "oxide-bhf.csv").read_text(encoding="utf-8").splitlines()[1]
     assert ",".join(COLUMNS) == header
+
+
+def test_the_card_explains_columns_in_the_words_of_the_schema() -> None:
+    """What a column holds is said once, in the schema."""
+    schema = json.loads((ROOT / "schemas" / "runs.schema.json").read_text(encoding="utf-8"))
+    fields = schema["items"]["properties"]
+    assert {name: fields[name]["description"] for name in COLUMN_WORDS} == COLUMN_WORDS
+    assert set(COLUMNS) - set(COLUMN_WORDS) == {
+        "date", "wafer", "film", "film_lot", "carrier", "bath", "note"
+    }  # fmt: skip

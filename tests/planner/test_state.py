@@ -14,7 +14,7 @@ from builder.reading.raw import Positions, Raw
 from builder.records.samples import Sample
 from builder.records.terms import Origin
 from builder.views.planner_link import planner_link
-from tests.planner.conftest import SCRIPTS, PlannerLab
+from tests.planner.conftest import SCRIPTS, TYPEAHEAD, PlannerLab
 
 _LAYER = {"film": "si-100", "thickness": "525 um", "role": "under"}
 
@@ -22,7 +22,8 @@ _LAYER = {"film": "si-100", "thickness": "525 um", "role": "under"}
 @pytest.fixture(scope="module")
 def stateful(model: Page) -> Page:
     """The model's page with what holds a sample on top of it."""
-    for name in ("sample-check", "sample-file", "address", "state"):
+    model.add_script_tag(path=TYPEAHEAD)
+    for name in ("names", "sample-check", "sample-file", "address", "state"):
         model.add_script_tag(path=SCRIPTS / f"{name}.js")
     return model
 

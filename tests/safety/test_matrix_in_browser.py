@@ -56,7 +56,7 @@ def test_without_script_a_cell_is_a_link_to_its_evidence(open_page: Open, any_ro
     page = open_page(any_root + URL, java_script_enabled=False).page
     anchor = _first_never(page)
     page.locator("td.ew-pairs-never a").first.click()
-    assert page.url.endswith(f"#{anchor}")
+    page.wait_for_url(f"**#{anchor}")
     box = page.locator(f"#{anchor}").bounding_box()
     assert box is not None and 0 <= box["y"] < 900
 

@@ -224,3 +224,16 @@ def test_every_pictogram_has_our_drawing(code: str) -> None:
     assert 'd="M60 4 116 60 60 116 4 60Z"' in text
     assert "<image" not in text
     assert "href" not in text
+
+
+@pytest.mark.parametrize("page", ["etchants/piranha", "chemicals/h2o2-30", "chemicals/hno3-70"])
+def test_what_must_never_meet_it_stands_first(shipped_site: Path, page: str) -> None:
+    """Before anything else the page names what its table says never to mix with it, groups by name."""
+    html = (shipped_site / f"{page}.html").read_text(encoding="utf-8")
+    first = html.partition("Must never meet:")[2].partition("</p>")[0]
+    table = html.partition('<h2 id="must-not-meet">')[2].partition("</table>")[0]
+    rows = [row for row in table.split("<tr>") if 'class="ew-never"' in row]
+    assert rows and html.index("Must never meet:") < html.index('class="ew-caution"')
+    for row in rows:
+        head = re.sub(r"<[^>]*>", "", row.partition("</th>")[0])
+        assert head.partition(":")[0].casefold() in first.casefold(), head

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import pytest
+from playwright.sync_api import expect
 
 from tests.browser import Open
 from tests.site.page_kinds import PAGES
@@ -35,6 +36,30 @@ def test_nothing_is_wider_than_the_window(open_page: Open, http_root: str, kind:
         page.set_viewport_size({"width": width, "height": height})
         found[name] = page.evaluate(_TOO_WIDE)
     assert found == {name: [False] for name in _WINDOWS}
+
+
+@pytest.mark.parametrize("kind", ["recipe", "film list", "method note"])
+def test_a_phone_has_the_way_to_every_part(open_page: Open, http_root: str, kind: str) -> None:
+    """The drawer of a narrow window leads on, also from pages that show no navigation beside them."""
+    page = open_page(http_root + PAGES[kind], viewport={"width": 360, "height": 780}).page
+    page.locator("label.md-header__button[for='__drawer']").click()
+    drawer = page.locator(".md-sidebar--primary")
+    expect(drawer.get_by_role("link").filter(visible=True).first).to_be_in_viewport()
+    if kind != "method note":  # there the drawer opens at the part that one is in
+        drawer.get_by_role("link", name="Chemicals").click()
+        page.wait_for_url("**/chemicals/index.html")
+
+
+def test_tabs_come_back_at_the_top(open_page: Open, http_root: str) -> None:
+    """Scrolled away and back, the tabs lead on as before."""
+    page = open_page(http_root + PAGES["recipe"]).page
+    tabs = page.locator(".md-tabs")
+    page.evaluate("window.scrollTo(0, 3000)")
+    expect(tabs).to_have_attribute("hidden", "")
+    page.evaluate("window.scrollTo(0, 0)")
+    expect(tabs).not_to_have_attribute("hidden", "")
+    page.locator(".md-tabs a", has_text="Films").click()
+    page.wait_for_url("**/films/index.html")
 
 
 def test_large_letters_are_not_cut(open_page: Open, http_root: str) -> None:

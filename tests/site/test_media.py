@@ -3,7 +3,9 @@
 from __future__ import annotations
 
 import io
+import re
 from itertools import combinations
+from pathlib import Path
 from typing import Any
 
 import numpy as np
@@ -101,7 +103,37 @@ def test_print_shows_the_page_and_not_the_site(open_page: Open, http_root: str) 
     assert page.evaluate("getComputedStyle(document.querySelector('.ew-lead')).color") == "rgb(0, 0, 0)"
 
 
-@pytest.mark.parametrize("kind", ["recipe", "chemical", "method note"])
+_ON_PAPER = re.compile(r'<div class="ew-screen-only">\n<h2.*', re.DOTALL)
+_LONGEST_ON_PAPER = 6
+
+
+def test_a_recipe_prints_on_one_sheet(open_page: Open, http_root: str, shipped_site: Path) -> None:
+    """The recipes with most to say on paper still fit on one sheet of A4."""
+    said = {
+        path.name: len(_ON_PAPER.sub("", path.read_text(encoding="utf-8")))
+        for path in (shipped_site / "recipes").glob("[!i]*.html")
+    }
+    longest = sorted(said, key=lambda name: -said[name])[:_LONGEST_ON_PAPER]
+    sheets = {}
+    for name in longest:
+        pdf = open_page(f"{http_root}recipes/{name}").page.pdf(format="A4", prefer_css_page_size=True)
+        sheets[name] = pdf.count(b"/Type /Page\n") or pdf.count(b"/Type /Page ")
+    assert sheets == dict.fromkeys(longest, 1)
+
+
+def test_paper_leaves_out_evidence_and_says_so(open_page: Open, http_root: str) -> None:
+    """Runs and charts stay on the screen; first action, equipment and the word of every film are printed."""
+    page = open_page(http_root + PAGES["recipe"], viewport=_A4_PX).page
+    paper = page.locator(".ew-paper-only")
+    assert not paper.is_visible()
+    page.emulate_media(media="print")
+    assert paper.is_visible() and "stand on the page itself" in paper.inner_text()
+    assert not page.get_by_role("region", name="Monitor wafers").is_visible()
+    for words in ("first action", "Protective equipment", "Waste stream", "If it has not cleared", "lost"):
+        assert page.locator("article").get_by_text(words).first.is_visible(), words
+
+
+@pytest.mark.parametrize("kind", ["chemical", "method note"])
 def test_print_makes_few_sheets(open_page: Open, http_root: str, kind: str) -> None:
     """A page prints as A4 sheets, and no sheet comes out empty."""
     page = open_page(http_root + PAGES[kind]).page

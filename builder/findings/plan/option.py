@@ -35,6 +35,7 @@ from builder.findings.plan.result import (
     Remark,
     UnstatedCode,
 )
+from builder.findings.plan.row_order import ordered_rows
 from builder.findings.plan.sample import PlanFilm, PlanSample, Stage, depth_in
 from builder.records.terms import Method, Role, State, Status
 
@@ -71,8 +72,13 @@ def plan_option(facts: PlanFacts, etching: Etching, stage: Stage, asked: Asked) 
         proven=recipe is not None and recipe.status is Status.PROVEN and known.rank is Rank.OWN,
         hazard=etching.etchant.hazard, has_margin=_has_margin(rows),
         phi=timing.cut.nonuniformity, offset_s=timing.cut.offset_s, overetch=timing.cut.overetch,
-        later=tuple(_later(reach)), caps=caps,
+        later=tuple(_later(reach)), caps=caps, bares=_bared(stage),
     )  # fmt: skip
+
+
+def _bared(stage: Stage) -> str | None:
+    """Return the film that shows when the target has cleared, None where it does not or nothing is listed."""
+    return stage.below[0].film if stage.below and is_through(stage.sample, stage.target) else None
 
 
 def _later(reach: Reaching) -> Iterator[LaterTarget]:
@@ -242,33 +248,6 @@ def unstated(reach: Reaching, rows: Sequence[FilmRow]) -> Iterator[Remark]:
         yield Remark(UnstatedCode.WINDOW)
     if sample.through_wafer and sample.carrier is None and not reach.stage.below:
         yield Remark(UnstatedCode.STOP)
-
-
-def ordered_rows(rows: Iterator[FilmRow]) -> tuple[FilmRow, ...]:
-    """Worst first; of the adhesion layers that may lie under one noble metal, only the worst."""
-    listed = list(rows)
-    if len({(row.role, row.film, row.thickness_nm) for row in listed}) < len(listed):
-        # No two rows change places because they were listed so.
-        listed.sort(key=repr)
-    ordered = sorted(
-        listed,
-        key=lambda row: (
-            -row.verdict.order,
-            -row.verdict_by_look.order,
-            row.role,
-            row.film,
-            row.thickness_nm,
-        ),
-    )
-    kept: list[FilmRow] = []
-    noble: set[object] = set()
-    for row in ordered:
-        under = next((cap.params["film"] for cap in row.caps if cap.code == CapCode.UNDER_NOBLE), None)
-        if under is not None and under in noble:
-            continue
-        noble.add(under)
-        kept.append(row)
-    return tuple(kept)
 
 
 def _has_margin(rows: Sequence[FilmRow]) -> bool:

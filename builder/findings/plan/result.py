@@ -152,7 +152,8 @@ class Option:
     """
     One etch for one target. `recipe` None: an etchant alone, by published facts.
 
-    `caps` keep the plan as a whole from "holds"; they stand among each film's caps too.
+    `caps` keep the plan as a whole from "holds"; they stand among each film's caps too. `bares` is the
+    film that shows when the target has cleared, None where nothing clears or nothing below is listed.
     """
 
     recipe: str | None
@@ -177,6 +178,7 @@ class Option:
     overetch: float
     later: tuple[LaterTarget, ...] = ()
     caps: tuple[Remark, ...] = ()
+    bares: str | None = None
 
 
 @dataclass(frozen=True)

@@ -10,8 +10,9 @@ from builder.findings.plan.evidence import Asked, Etching
 from builder.findings.plan.exposures import Reaching, Timing, cases_of_treatment
 from builder.findings.plan.facts import PlanFacts
 from builder.findings.plan.judging import PlanCaps, judge, worst_of
-from builder.findings.plan.option import gas_facts, is_through, ordered_rows, phi_of, reaction_of, unstated
+from builder.findings.plan.option import gas_facts, is_through, phi_of, reaction_of, unstated
 from builder.findings.plan.result import NoteCode, Option, Remark
+from builder.findings.plan.row_order import ordered_rows
 from builder.findings.plan.sample import PlanFilm, PlanSample, Stage, stages_of
 from builder.records.terms import Role, Treatment
 

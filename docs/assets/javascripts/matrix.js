@@ -9,6 +9,8 @@
 (function () {
   "use strict";
   const LIT = "ew-grid-lit";
+  /** Columns of numbers that an upright sheet of A4 holds. */
+  const MOST_WITH_NUMBERS = 12;
   const VERDICTS = { h: "holds", b: "borderline", l: "lost", u: "unmeasured" };
   const STEPS = { ArrowLeft: [0, -1], ArrowRight: [0, 1], ArrowUp: [-1, 0], ArrowDown: [1, 0] };
   const SVG = "http://www.w3.org/2000/svg";
@@ -205,6 +207,7 @@
 
     /** Only these columns stand in the table. */
     function place(wanted) {
+      table.toggleAttribute("data-ew-wide", Boolean(timeChoice) && wanted.length > MOST_WITH_NUMBERS);
       if (wanted.join() === places.join()) return;
       places = wanted;
       const pick = (row, all) => row.replaceChildren(row.cells[0], ...wanted.map((index) => all[index]));

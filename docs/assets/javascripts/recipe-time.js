@@ -25,7 +25,7 @@
     const steps = [[10, 0.1], [120, 1], [600, 5], [3600, 10], [Infinity, 60]];
     const step = steps.find(function (one) { return seconds < one[0]; })[1];
     const count = round(Number((seconds / step).toPrecision(12)));
-    if (step < 1) return seconds > 0 ? (count / 10).toFixed(1) + NO_BREAK + "s" : "0" + NO_BREAK + "s";
+    if (step < 1) return (count ? (count / 10).toFixed(1) : "0") + NO_BREAK + "s";
     let left = count * step;
     const parts = [];
     [[3600, "h"], [60, "min"], [1, "s"]].forEach(function (unit) {
@@ -43,13 +43,15 @@
     return value > 0 ? value : NaN;
   }
 
+  /** What is shown for a typed depth: the two times, and a sentence that is read out. */
   function answer(target, text, sizeNm) {
-    if (!text.trim()) return "";
+    if (!text.trim()) return { words: "" };
     const depth = depthOf(text) * sizeNm;
-    if (!(depth > 0 && depth < Infinity)) return "Type the thickness as a number above 0.";
+    if (!(depth > 0 && depth < Infinity)) return { words: "Type the thickness as a number above 0." };
     const found = times(target, depth);
-    return "First look at " + timeText(found.first, Math.floor) + ", latest stop at "
-      + timeText(found.latest, Math.ceil) + ".";
+    const first = timeText(found.first, Math.floor);
+    const latest = timeText(found.latest, Math.ceil);
+    return { first: first, latest: latest, words: "First look at " + first + ", latest stop at " + latest + "." };
   }
 
   function start(form, data) {
@@ -57,9 +59,17 @@
     const unit = form.querySelector("[data-ew-depth-unit]");
     const film = form.querySelector("[data-ew-depth-film]");
     const shown = form.querySelector("[data-ew-depth-answer]");
+    // The large numbers follow, or they would tell the time of another depth; without a depth they come back.
+    const large = ["first", "latest", "for"].map(function (name) {
+      const place = document.querySelector("[data-ew-" + name + "]");
+      return place && { name: name, place: place, usual: place.textContent };
+    }).filter(Boolean);
+
     function show() {
-      const target = data.targets[film ? Number(film.value) : 0];
-      shown.textContent = answer(target, value.value, Number(unit.value));
+      const found = answer(data.targets[film ? Number(film.value) : 0], value.value, Number(unit.value));
+      found.for = value.value.trim() + NO_BREAK + unit.selectedOptions[0].text;
+      shown.textContent = found.words;
+      large.forEach(function (one) { one.place.textContent = found.first ? found[one.name] : one.usual; });
     }
     form.addEventListener("submit", function (event) { event.preventDefault(); });
     form.addEventListener("input", show);

@@ -34,7 +34,7 @@
     const reference = Object.assign({}, given.facts, given.reference, {
       etchants: Object.assign({}, given.facts.etchants, given.reference.etchants),
     });
-    return { facts: facts, reference: prepared(reference, given), cards: given.cards, samples: given.samples, sources: given.sources, lab: given.lab };
+    return { facts: facts, reference: prepared(reference, given), cards: given.cards, legend: given.legend, samples: given.samples, sources: given.sources, lab: given.lab };
   }
 
   /** @param {any} plain @param {any} given @returns {Facts} */

@@ -108,11 +108,8 @@
   function defaultAllowance(reach, one, thickness) {
     const rules = reach.facts.defaults.allowance;
     if (one.film.assumed) return null;
-    if (one.role === "mask") {
-      const organic = ew.films.ORGANIC.has(reach.facts.films[one.film.film].family);
-      return ew.words.allowedMask(thickness, rules, organic && inPlasma(reach.method));
-    }
-    return one.nextToTarget ? ew.words.allowedUnder(thickness, rules) : ew.words.allowedOther(thickness, rules);
+    const isOrganic = ew.films.ORGANIC.has(reach.facts.films[one.film.film].family);
+    return ew.words.allowedByDefault(rules, one.role, thickness, one.nextToTarget, isOrganic && inPlasma(reach.method));
   }
 
   /** @param {Reach} reach @param {Case} one @param {Evidence} known @param {Exposure | null} exposure */
@@ -127,7 +124,7 @@
     if (!film.is_family) return own;
     const words = ew.evidence
       .familyMembers(reach.facts, reach.etching, film, reach.asked)
-      .map((member) => wordOfEvidence(exposure, member, lossOf(reach, one, member, exposure), bounds));
+      .map((/** @type {Evidence} */ member) => wordOfEvidence(exposure, member, lossOf(reach, one, member, exposure), bounds));
     return [...words, own].reduce((worst, word) => (ew.words.ORDER[word.verdict] > ew.words.ORDER[worst.verdict] ? word : worst));
   }
 

@@ -20,6 +20,7 @@
     const best = bestWord(known.rank, caps, timing.schedule);
     const verdict = worstOf(rows, best, "verdict");
     const recipe = etching.recipe;
+    const through = isThrough(stage.sample, stage.target);
     /** @type {Remark[] | null} */
     let noted = null;
     /** @type {Remark[] | null} */
@@ -41,6 +42,7 @@
       hazard: etching.etchant.hazard, hasMargin: hasMargin(facts, rows),
       phi: timing.cut.phi, offsetS: timing.cut.offsetS, overetch: timing.cut.overetch,
       later: laterOf(reach),
+      bares: through && stage.below.length ? stage.below[0].film : null,
     };
   }
 
@@ -230,14 +232,26 @@
     return found;
   }
 
-  /** Worst first; of the adhesion layers that may lie under one noble metal, only the worst. @param {FilmRow[]} rows */
+  /** How much of what a film may lose goes at worst, by timer or by look; unknown counts as all. @param {FilmRow} row */
+  function shareUsed(row) {
+    if (row.allowedNm === Infinity) return -1;
+    const highs = [row.loss.high, row.lossByLook.high];
+    if (!row.allowedNm || highs.includes(null)) return Infinity;
+    // To nine digits: the last bits of exp and log are the platform's, and must not decide an order.
+    return Number((Math.max(.../** @type {number[]} */ (highs)) / row.allowedNm).toPrecision(9));
+  }
+
+  /** Worst first, then closest to its limit; of the layers that may lie under one noble metal, the worst. @param {FilmRow[]} rows */
   function orderedRows(rows) {
+    const shares = new Map(rows.map((row) => [row, shareUsed(row)]));
+    const shareOf = (/** @type {FilmRow} */ row) => Number(shares.get(row));
+    const byShare = (/** @type {FilmRow} */ one, /** @type {FilmRow} */ other) => Number(shareOf(one) < shareOf(other)) - Number(shareOf(one) > shareOf(other));
     const order = ew.words.ORDER;
     const byCode = ew.couples.byCode;
     const ordered = rows.sort(
       (one, other) =>
         order[other.verdict] - order[one.verdict] || order[other.verdictByLook] - order[one.verdictByLook] ||
-        byCode(one.role, other.role) || byCode(one.film, other.film) || one.thicknessNm - other.thicknessNm ||
+        byShare(one, other) || byCode(one.role, other.role) || byCode(one.film, other.film) || one.thicknessNm - other.thicknessNm ||
         // No two rows change places because they were listed so.
         byCode(JSON.stringify(one), JSON.stringify(other)),
     );

@@ -130,7 +130,7 @@
         ...etching.etchant.cautions.map((/** @type {string} */ words) => remark("hazard", { words: words })),
         ...couples.notes,
       ],
-      unstated: ew.option.unstated(reach, rows), proven: false, hazard: etching.etchant.hazard, hasMargin: false,
+      unstated: ew.option.unstated(reach, rows), bares: null, proven: false, hazard: etching.etchant.hazard, hasMargin: false,
       phi: timing.cut.phi, offsetS: 0, overetch: 0, later: [],
     };
   }

@@ -29,10 +29,15 @@
     return found.form === "range" ? { low: rounded(found.low), high: rounded(found.high) } : null;
   }
 
+  /** The thickness of a film of a checked sample file, nm. @param {Facts} facts @param {any} film @returns {number} */
+  function thicknessNm(facts, film) {
+    return rounded(ew.units.parse(facts.units, film.thickness, "length").value);
+  }
+
   /** A film of a sample file that has passed its check. @param {Facts} facts @param {any} film @param {string} role @returns {PlanFilm} */
   function planFilm(facts, film, role) {
     const found = ew.units.parse(facts.units, film.thickness, "length");
-    const thickness = rounded(found.value);
+    const thickness = thicknessNm(facts, film);
     const half = found.halfWidth;
     const stated = film.allowed_loss;
     return {
@@ -147,5 +152,5 @@
     return Object.assign({}, sample, { layers: layers, exposed: [...sample.exposed, ...bared] });
   }
 
-  ew.sample = Object.freeze({ planSample, planSteps, stagesOf, depthIn, wornSample, cut, stripped, rounded });
+  ew.sample = Object.freeze({ planSample, planSteps, stagesOf, depthIn, wornSample, cut, stripped, rounded, thicknessNm });
 })((globalThis.etchwright = globalThis.etchwright || {}));

@@ -84,5 +84,11 @@
     return Math.max(0, thickness - reserve);
   }
 
-  ew.words = Object.freeze({ WORDS, ORDER, worst, worse, capped, filmWord, allowedUnder, allowedOther, allowedMask });
+  /** What a film may lose when nobody has said. @param {Allowance} rules @param {string} role @param {number} thickness @param {boolean} nextToTarget @param {boolean} resistInPlasma */
+  function allowedByDefault(rules, role, thickness, nextToTarget, resistInPlasma) {
+    if (role === "mask") return allowedMask(thickness, rules, resistInPlasma);
+    return nextToTarget ? allowedUnder(thickness, rules) : allowedOther(thickness, rules);
+  }
+
+  ew.words = Object.freeze({ WORDS, ORDER, worst, worse, capped, filmWord, allowedByDefault });
 })((globalThis.etchwright = globalThis.etchwright || {}));

@@ -141,7 +141,10 @@
     const way = rounding || "nearest";
     const found = [[10, 0.1], [120, 1], [600, 5], [3600, 10]].find((row) => timeS < row[0]);
     const step = found ? found[1] : 60;
-    if (timeS > 0 && step < 1) return joined(placed(timeS, 1, way), "s");
+    if (timeS > 0 && step < 1) {
+      const tenths = placed(timeS, 1, way);
+      return joined(tenths === "0.0" ? "0" : tenths, "s");
+    }
     return clock(Number(rounded(timeS / step, 0, way)) * Math.trunc(step));
   }
 

@@ -27,6 +27,11 @@
     return null;
   }
 
+  /** Of an etch or a treatment, which may be at room temperature. @param {Checking} c @param {string} field @param {any} text */
+  function etchTemperature(c, field, text) {
+    if (text !== "room") temperature(c, field, text);
+  }
+
   /** @param {Checking} c @param {string} field @param {any} text */
   function temperature(c, field, text) {
     if (text !== undefined) quantity(c, field, text, "temperature", false);
@@ -35,7 +40,17 @@
   /** @param {Checking} c @param {string} field @param {any} film */
   function filmName(c, field, film) {
     if (!film) return report(c, field, "name the film");
-    if (!ew.evidence.at(c.facts.films, film)) report(c, field, 'there is no film "' + film + '"');
+    if (!ew.evidence.at(c.facts.films, film)) report(c, field, noFilm(c, film));
+  }
+
+  /** @param {Checking} c @param {any} film */
+  function noFilm(c, film) {
+    return ew.names.unknownWords(ew.names.entriesOf(c.facts).films, "film", String(film));
+  }
+
+  /** @param {Checking} c @param {any} etchant */
+  function noEtchant(c, etchant) {
+    return ew.names.unknownWords(ew.names.entriesOf(c.facts).etchants, "etchant", String(etchant));
   }
 
   /** One film; returns its thickness in nm, or null. @param {Checking} c @param {string} field @param {any} film */
@@ -54,7 +69,7 @@
       }
     }
     if (film.on !== undefined && film.on !== "none" && !ew.evidence.at(c.facts.films, film.on)) {
-      report(c, field + "/on", 'there is no film "' + film.on + '"');
+      report(c, field + "/on", noFilm(c, film.on));
     }
     return thickness === null || !found ? null : thickness + (found.halfWidth || 0);
   }
@@ -119,9 +134,9 @@
         if (etches > targets) report(c, field + "/etch", "more etches than targets: nothing is left to remove");
         return;
       }
-      if (step.etchant !== undefined && !ew.evidence.at(c.facts.etchants, step.etchant)) report(c, field + "/etchant", 'there is no etchant "' + step.etchant + '"');
+      if (step.etchant !== undefined && !ew.evidence.at(c.facts.etchants, step.etchant)) report(c, field + "/etchant", noEtchant(c, step.etchant));
       if (step.time !== undefined) quantity(c, field + "/time", step.time, "time", true);
-      temperature(c, field + "/temperature", step.temperature);
+      etchTemperature(c, field + "/temperature", step.temperature);
     });
   }
 
@@ -129,9 +144,9 @@
   function limits(c, file) {
     const limits = file.limits || {};
     temperature(c, "limits/temperature", limits.temperature);
-    temperature(c, "temperature", file.temperature);
+    etchTemperature(c, "temperature", file.temperature);
     for (const etchant of limits.etchants || []) {
-      if (!ew.evidence.at(c.facts.etchants, etchant)) report(c, "limits/etchants", 'there is no etchant "' + etchant + '"');
+      if (!ew.evidence.at(c.facts.etchants, etchant)) report(c, "limits/etchants", noEtchant(c, etchant));
     }
     for (const tool of limits.tools || []) {
       if (!c.facts.tools.has(tool)) report(c, "limits/tools", 'there is no tool "' + tool + '"');

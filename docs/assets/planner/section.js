@@ -64,6 +64,8 @@
     const { top, bottom, layer } = placed;
     const height = bottom - top;
     const left = layer.left === null ? 1 : layer.left;
+    // The back is wet all over, and goes from below.
+    if (layer.role === "back") return left <= 0 ? [] : [rectangle(0, top, WIDTH, top + height * left)];
     if (isMask) {
       const worn = bottom - height * left;
       return left <= 0 ? [] : [rectangle(0, worn, OPENING[0], bottom), rectangle(OPENING[1], worn, WIDTH, bottom)];

@@ -25,6 +25,7 @@
     "no-evidence": "nothing on record for this film in this etch",
     "time-unknown": "nobody knows how long the etch takes, so its loss is unknown",
   };
+  const ALL = "all of it";
   const OF_A_MEMBER = {
     "mild-end-exceeds": "even the mild end takes more of one than is allowed",
     straddles: "one may lose more than is allowed",
@@ -38,7 +39,7 @@
       "the mask was seen to stay on " + named(p.on) + " for " + time(p.held_s) + " only" +
       (p.stop_s === null ? "" : ", and the etch may take " + time(p.stop_s)),
     back: () => "what covers the back is not stated, and the back is wet from the start",
-    barrier: (p, named) => named(p.film) + " is not known to be dense; what etches may pass it to " + named(p.under),
+    barrier: (p, named) => named(p.under) + " may be reached through it: nobody has shown that it is dense",
     "carrier-load": (p, named) => "the carrier is bare " + named(p.film) + " too, and no run had such a load",
     conflict: () => "one own run contradicts the literature",
     couple: (p, named) => named(p.one) + " and " + named(p.other) + " are wet together; no record of that couple",
@@ -195,14 +196,51 @@
     const numbers = ew.numbers;
     const isOpen = row.allowedNm === null || row.allowedNm === Infinity;
     const allowed = isOpen ? "" : " of " + size(/** @type {number} */ (row.allowedNm)) + " allowed";
+    const limit = isOpen ? "" : "; allowed is " + size(/** @type {number} */ (row.allowedNm));
     if (row.ground === "mild-end-exceeds") {
-      const whole = /** @type {number} */ (row.loss.low) >= row.thicknessNm ? " (all of it)" : "";
-      const least = numbers.withUnit(numbers.length(row.loss.low, null, null)).replace(/^at least /, "");
-      const limit = isOpen ? "" : "; allowed is " + size(/** @type {number} */ (row.allowedNm));
-      return "even the mild end takes " + least + whole + limit;
+      const goes = Math.min(row.loss.low, leftOf(row));
+      const least = numbers.withUnit(numbers.length(goes, null, null)).replace(/^at least /, "");
+      return "even the mild end takes " + least + (takesAll(row, row.loss.low) ? " (" + ALL + ")" : "") + limit;
     }
-    const high = row.loss.high === null ? "an unknown amount" : numbers.withUnit(numbers.length(null, null, row.loss.high));
-    return "at worst " + high.replace(/^at most /, "") + allowed;
+    if (row.loss.high === null) return "at worst an unknown amount" + allowed;
+    return "at worst " + worstWords(row, row.loss.high) + (takesAll(row, row.loss.high) ? limit : allowed);
+  }
+
+  /** Does a loss reach what earlier steps have left of a film? @param {FilmRow} row @param {number} lossNm */
+  function takesAll(row, lossNm) {
+    return lossNm >= leftOf(row);
+  }
+
+  /** @param {FilmRow} row */
+  function leftOf(row) {
+    return Math.max(0, row.thicknessNm - (row.spentNm || 0));
+  }
+
+  /** The worst end of a loss, rounded up. @param {FilmRow} row @param {number} highNm */
+  function worstWords(row, highNm) {
+    const high = ew.numbers.withUnit(ew.numbers.length(null, null, highNm));
+    return takesAll(row, highNm) ? ALL : high.replace(/^at most /, "");
+  }
+
+  /** What goes of a film, with its interval; a film cannot lose more than there is. @param {FilmRow} row @param {Span} span */
+  function lossWords(row, span) {
+    const { length, withUnit, full } = ew.numbers;
+    const { low, mid, high } = span;
+    if (low !== null && takesAll(row, low)) return "loses " + ALL;
+    if (high === null || !takesAll(row, high)) {
+      const words = full(length(low, mid, high));
+      return words === ew.numbers.UNKNOWN ? "loss unknown" : "loses " + words;
+    }
+    if (low === null) return "loses at worst " + ALL;
+    const least = withUnit(length(low, null, null)).replace(/^at least /, "");
+    const likely = mid === null || takesAll(row, mid) ? "" : withUnit(length(null, mid, null)) + ", ";
+    return "loses " + likely + "from " + least + " to " + ALL;
+  }
+
+  /** Whose look the recipe's words on clearing describe, and what shows on this sample. @param {Option} option @param {Named} named */
+  function clearingWords(option, named) {
+    const seen = "As seen on this recipe's own wafers.";
+    return option.bares === null ? seen : seen + " Under your target lies " + named(option.bares) + ": expect its look, not that of another film.";
   }
 
   /** @param {string | null} hint @param {Named} named @returns {string} */
@@ -270,6 +308,6 @@
   const excludedWords = (/** @type {Remark} */ item, /** @type {Named} */ named) => EXCLUDED[item.code](item.params, named);
 
   ew.strings = Object.freeze({
-    reason, blocker, rowName, rankWords, liftWords, testPieceWords, capWords, noteWords, unstatedWords, excludedWords, hintWords, capital, listed,
+    reason, blocker, worstWords, lossWords, takesAll, clearingWords, rowName, rankWords, liftWords, testPieceWords, capWords, noteWords, unstatedWords, excludedWords, hintWords, capital, listed,
   });
 })((globalThis.etchwright = globalThis.etchwright || {}));

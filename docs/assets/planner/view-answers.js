@@ -36,7 +36,7 @@
   function placeWords(shown, field) {
     const [list, index] = field.split("/");
     const film = (shown.state.file[list] || [])[index];
-    if (list === "layers" && index !== undefined) return "Layer " + (Number(index) + 1) + (film && film.film ? ", " + ew.viewFields.nameOf(shown.entries, film.film) : "") + ": ";
+    if (list === "layers" && index !== undefined) return "Layer " + (Number(index) + 1) + (film && film.film ? ", " + ew.names.nameOf(shown.entries, film.film) : "") + ": ";
     if (list === "also_exposed") return "Exposed film " + (Number(index) + 1) + ": ";
     const words = { back: "Back: ", goal: "Goal: ", limits: "Limits: ", temperature: "Temperature: ", steps: "Step " + (Number(index) + 1) + ": " };
     return words[/** @type {keyof typeof words} */ (list)] || "";
@@ -57,7 +57,7 @@
   /** The best answer in one line; `spoken` with the verdict in words, which otherwise stands before it. @param {any} shown @param {boolean} spoken */
   function bestWords(shown, spoken) {
     if (shown.problems.length) {
-      return shown.state.file.layers.length ? "Not yet a whole sample: " + shown.problems[0].words + "." : "Add the layers of your sample, from the top.";
+      return shown.state.file.layers.length ? "Not yet a whole sample: " + shown.problems[0].words.replace(/(?<![?.])$/, ".") : "Add the layers of your sample, from the top.";
     }
     const parts = shown.plan.stages.map((/** @type {StagePlan} */ stage) => stageWords(shown, stage, spoken || shown.plan.isSequence));
     return parts.filter(Boolean).join(" ");
@@ -82,7 +82,16 @@
     const planned = !shown.problems.length;
     return el("div", { class: ew.hooks.best, id: "plan-best" },
       planned && shown.plan.stages.length > 0 && verdict(ew.planning.verdictOf(shown.plan)),
-      el("span", { class: ew.hooks.bestLine }, bestWords(shown, false)));
+      el("span", { class: ew.hooks.bestLine }, bestWords(shown, false)),
+      ew.viewStack.button(planned ? "See the answers" : "See what is missing", toAnswers, { id: "plan-best-jump", class: ew.hooks.button + " " + ew.hooks.jump }));
+  }
+
+  /** On a phone the answers stand far below the form. */
+  function toAnswers() {
+    const title = document.getElementById("plan-answers-title");
+    if (!title) return;
+    title.focus({ preventScroll: true });
+    title.scrollIntoView();
   }
 
   /** @param {any} shown @param {StagePlan} stage */

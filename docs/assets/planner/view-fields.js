@@ -63,34 +63,22 @@
     return control;
   }
 
-  /** A film or an etchant by any of its names. @param {Shown} shown @param {string} label @param {string} field @param {any[]} entries @param {{kind?: string, placeholder?: string}} [more] */
+  /** A film or an etchant by any of its names. @param {Shown} shown @param {string} label @param {string} field @param {any[]} entries @param {{kind?: string, placeholder?: string, freeWords?: boolean}} [more] `freeWords`: a text that names nothing may stand too */
   function named(shown, label, field, entries, more) {
     const id = String(valueAt(shown.state.file, field));
     const input = ew.dom.el("input", {
-      type: "text", autocomplete: "off", spellcheck: "false", placeholder: more && more.placeholder, value: nameOf(entries, id),
-      oninput: () => shown.send({ type: "set", field: field, value: idByName(entries, input.value) }),
+      type: "text", autocomplete: "off", spellcheck: "false", placeholder: more && more.placeholder, value: ew.names.nameOf(entries, id),
+      oninput: () => shown.send({ type: "set", field: field, value: idTyped() }),
+      // Once typing is over, the field shows which film was understood.
+      onchange: () => (input.value = ew.names.nameOf(entries, idTyped())),
     });
+    const idTyped = () => ew.names.idOf(entries, input.value, !(more && more.freeWords));
     const whole = labelled(label, field, input, more && more.kind);
     ew.find.combobox(input, entries, function (/** @type {any} */ entry) {
       input.value = entry.name;
       shown.send({ type: "set", field: field, value: entry.id, rebuild: true });
     });
     return whole;
-  }
-
-  /** @param {any[]} entries @param {string} id */
-  function nameOf(entries, id) {
-    const entry = entries.find((one) => one.id === id);
-    return entry ? entry.name : id;
-  }
-
-  /** The id of whatever is called exactly so, else the text as typed. @param {any[]} entries @param {string} typed */
-  function idByName(entries, typed) {
-    const sought = typed.trim().toLowerCase();
-    const entry =
-      entries.find((one) => one.id === sought || one.name.toLowerCase() === sought) ||
-      entries.find((one) => one.also.some((/** @type {string} */ name) => name.toLowerCase() === sought));
-    return entry ? entry.id : typed.trim();
   }
 
   /** Shows at each field what is wrong with it. @param {Element} form @param {{field: string, words: string}[]} problems */
@@ -110,5 +98,5 @@
     }
   }
 
-  ew.viewFields = Object.freeze({ idOf, valueAt, labelled, text, number, choice, select, named, nameOf, showProblems });
+  ew.viewFields = Object.freeze({ idOf, valueAt, labelled, text, number, choice, select, named, showProblems });
 })((globalThis.etchwright = globalThis.etchwright || {}));

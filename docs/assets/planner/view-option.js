@@ -3,6 +3,7 @@
 (function (ew) {
   "use strict";
 
+  const HEADS = ["Film", "By the timer", "If you look and finish", "Why"];
   const BAR = { width: 120, height: 18, pad: 4 };
 
   /** What an option is called. @param {any} shown @param {Option} option */
@@ -81,12 +82,23 @@
 
   /** What would lift each cap, and which test would give the numbers that are missing. @param {any} shown @param {Option} option */
   function lifts(shown, option) {
-    const all = [...option.planCaps, ...option.rows.flatMap((row) => row.caps)];
-    const byCode = new Map(all.map((cap) => [cap.code, cap]));
+    const { capital, capWords, liftWords, rowName } = ew.strings;
+    /** @type {Map<string, string>} */
+    const byCode = new Map();
+    const add = (/** @type {Remark} */ cap, /** @type {string} */ whose) => {
+      const words = whose ? whose + ": " + capWords(cap, named(shown)) : capWords(cap, named(shown));
+      if (!byCode.has(cap.code)) byCode.set(cap.code, capital(words) + ". " + capital(liftWords(cap.code)) + ".");
+    };
+    option.planCaps.forEach((cap) => add(cap, ""));
+    // "It" and "this mask" in a film's own caution mean that film.
+    option.rows.forEach((row) => row.caps.forEach((cap) => add(cap, rowName(row, named(shown)))));
+    return [...byCode.values(), ...testPieces(shown, option)];
+  }
+
+  /** The tests that would give the numbers that are missing. @param {any} shown @param {Option} option @returns {string[]} */
+  function testPieces(shown, option) {
     const tests = option.rows.map((row) => ew.strings.testPieceWords(row, shown.data.facts.films[row.film].family, named(shown)));
-    const toTest = ew.evidence.distinct(tests.filter(Boolean)).map((/** @type {string} */ words) => ew.strings.capital(words) + ".");
-    const toState = Array.from(byCode.values()).map((cap) => ew.strings.capital(ew.strings.capWords(cap, named(shown))) + ": " + ew.strings.liftWords(cap.code) + ".");
-    return [...toState, ...toTest];
+    return ew.evidence.distinct(tests.filter(Boolean)).map((/** @type {string} */ words) => ew.strings.capital(words) + ".");
   }
 
   /** The part of a film that stays in the worst case; null where nobody knows. @param {FilmRow | undefined} row @param {number} thickness */
@@ -99,7 +111,9 @@
   /** @param {any} shown @param {StagePlan} stage @param {Option} option */
   function drawing(shown, stage, option) {
     const { el } = ew.dom;
-    const layers = stage.stage.sample.layers.map((film) => drawnLayer(shown, stage, option, film));
+    const { layers: stack, back } = stage.stage.sample;
+    const isBackReached = back !== null && option.rows.some((row) => row.role === "back" && row.film === back.film);
+    const layers = [...stack, ...(back && isBackReached ? [back] : [])].map((film) => drawnLayer(shown, stage, option, film));
     const ratio = option.undercut.mid !== null && stage.stage.target.thicknessNm ? option.undercut.mid / stage.stage.target.thicknessNm : 0;
     const words = layers.map((layer) => layer.name + ": " + layer.remark);
     return el("div", { class: ew.hooks.drawing }, ew.viewSection.beforeAfter(layers, ratio, "Section before and after the etch, at worst. " + words.join("; ")));
@@ -112,7 +126,7 @@
     const depth = isTarget ? ew.sample.depthIn(stage.stage.sample, film) : null;
     const whole = depth === null || depth >= film.thicknessNm;
     const left = isTarget ? (whole ? 0 : 1 - /** @type {number} */ (depth) / film.thicknessNm) : leftOf(row, film.thicknessNm);
-    const name = named(shown)(film.film);
+    const name = (film.role === "back" ? "back: " : "") + named(shown)(film.film);
     const remark = isTarget ? (whole ? "gone" : "etched to depth") : remarkOf(row);
     return { name: name, remark: remark, family: shown.data.facts.films[film.film].family, role: isTarget ? "target" : film.role === "target" ? "under" : film.role, thicknessNm: film.thicknessNm, left: left };
   }
@@ -121,7 +135,7 @@
   function remarkOf(row) {
     if (!row) return "not reached";
     if (row.loss.high === null) return row.verdict === "lost" ? "lost" : "loss unknown";
-    return "at worst " + ew.numbers.plainLength(row.loss.high) + " gone";
+    return "at worst " + ew.strings.worstWords(row, row.loss.high) + " gone";
   }
 
   /** @param {any} shown @param {Option} option */
@@ -139,8 +153,15 @@
       ["Then", option.mode === "run-to-time" ? "run to time, " + numbers.time(times.latestStopS, "up") : option.mode === null ? "unknown" : "look first after " + numbers.time(times.firstLookS, "down") + ", finish, and stop by " + numbers.time(times.latestStopS, "up")],
       ["If you look and finish", ew.dom.verdict(option.verdictByLook)],
       ["Edge moves", numbers.full(undercut)],
+      ...clearing(shown, option),
     ];
     return el("dl", { class: ew.hooks.facts }, rows.flatMap(([term, text]) => [el("dt", {}, term), el("dd", {}, text)]));
+  }
+
+  /** @param {any} shown @param {Option} option */
+  function clearing(shown, option) {
+    const recipe = option.recipe ? shown.data.facts.etches[option.recipe] : null;
+    return recipe && recipe.clearing ? [["Cleared", [recipe.clearing, " ", ew.strings.clearingWords(option, named(shown))]]] : [];
   }
 
   /** @param {any} shown @param {string[]} ids */
@@ -151,11 +172,10 @@
   /** @param {any} shown @param {Option} option */
   function films(shown, option) {
     const { el } = ew.dom;
-    const heads = ["Film", "By the timer", "If you look and finish", "Why"];
     if (!option.rows.length) return null;
     return el("div", { class: ew.hooks.filmsBox, role: "region", tabindex: 0, "aria-label": "What happens to each film" },
       el("table", { class: ew.hooks.films },
-        el("thead", {}, el("tr", {}, heads.map((head) => el("th", { scope: "col" }, head)))),
+        el("thead", {}, el("tr", {}, HEADS.map((head) => el("th", { scope: "col" }, head)))),
         el("tbody", {}, option.rows.map((row) => filmRow(shown, row)))));
   }
 
@@ -168,8 +188,8 @@
     const place = { mask: "mask", under: "under the target", exposed: "exposed", back: "back" }[row.role] || row.role;
     return el("tr", {},
       el("th", { scope: "row" }, swatch(film.family), link("films/" + row.film + ".html", film.name), quiet(place + (row.assumed ? ", supposed" : "")), quiet(allowedWords(row))),
-      el("td", {}, loss(row, row.verdict, row.loss)), el("td", {}, loss(row, row.verdictByLook, row.lossByLook)),
-      el("td", {}, ew.strings.capital(ew.strings.reason(row, named(shown))) + ".", hint && quiet(hint),
+      el("td", { "data-label": HEADS[1] }, loss(row, row.verdict, row.loss)), el("td", { "data-label": HEADS[2] }, loss(row, row.verdictByLook, row.lossByLook)),
+      el("td", { "data-label": HEADS[3] }, ew.strings.capital(ew.strings.reason(row, named(shown))) + ".", hint && quiet(hint),
         el("div", {}, el("span", { class: "ew-rank" }, ew.strings.rankWords(row.rank)), sources(shown, row.sources))));
   }
 
@@ -182,8 +202,8 @@
   /** A verdict with the loss it comes from. @param {FilmRow} row @param {string} verdict @param {Span} span */
   function loss(row, verdict, span) {
     const { el } = ew.dom;
-    const words = ew.numbers.full(ew.numbers.length(span.low, span.mid, span.high));
-    return [ew.dom.verdict(verdict), el("div", {}, words === ew.numbers.UNKNOWN ? "loss unknown" : "loses " + words), bar(row, span, "loses " + words + ", " + allowedWords(row))];
+    const words = ew.strings.lossWords(row, span);
+    return [ew.dom.verdict(verdict), el("div", {}, words), bar(row, span, words + ", " + allowedWords(row))];
   }
 
   /** An interval on a scale from zero, with what is allowed marked. @param {FilmRow} row @param {Span} span @param {string} words */
@@ -203,5 +223,5 @@
       limit !== null && svg("path", { class: "ew-bar-limit", d: "M" + at(limit) + " 0V18" }));
   }
 
-  ew.viewOption = Object.freeze({ item, nameOf, timesOf, named, keyOf });
+  ew.viewOption = Object.freeze({ item, nameOf, timesOf, named, keyOf, allowedWords, testPieces });
 })((globalThis.etchwright = globalThis.etchwright || {}));

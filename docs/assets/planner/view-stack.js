@@ -3,11 +3,11 @@
 (function (ew) {
   "use strict";
 
-  const ROLES = [["mask", "mask"], ["target", "to be removed"], ["under", "stays"]];
+  const ROLES = [["mask", "mask"], ["target", "to remove"], ["under", "stays"]];
   const EXPOSED = [["face", "its face"], ["sidewall", "its sidewall"], ["both-faces", "both faces"]];
-  const EDGES = [["", "not stated"], ["open", "open to the etch"], ["protected", "protected"], ["unused", "nothing there is used"]];
+  const EDGES = [["", "not stated"], ["open", "open to the etch"], ["protected", "protected"], ["unused", "not used"]];
   const BACKS = [["", "not stated"], ["protected", "protected"], ["film", "a film"]];
-  const DEPTHS = [["through", "through the targets"], ["through-wafer", "through the wafer"], ["depth", "a depth"]];
+  const DEPTHS = [["through", "right through"], ["through-wafer", "through wafer"], ["depth", "to a depth"]];
   const METHODS = ["wet", "vapour", "plasma", "cyclic", "lift-off"];
   const TREATS = [["develop", "develop"], ["strip", "strip"], ["clean", "clean"], ["rework", "rework"], ["rinse", "rinse"]];
 
@@ -43,11 +43,12 @@
     const isFilled = film.allowed_loss !== undefined || film.on !== undefined || film.surface !== undefined;
     const under = [{ id: "none", name: "nothing", also: ["none"] }, ...shown.entries];
     return el("details", { class: ew.hooks.more, open: isFilled || asksUnder, id: fields.idOf(field + "/more") },
-      el("summary", {}, asksUnder ? "What lies under it? How much may go?" : "How much may go, what lies under it"),
+      el("summary", {}, asksUnder ? "What lies under it? How much may go?" : "How much may go, what lies under it",
+        el("span", { class: ew.hooks.quiet, id: fields.idOf(field + "/default") })),
       el("div", { class: ew.hooks.fields },
-        fields.text(shown, "May lose", field + "/allowed_loss", { placeholder: "20 nm, or any", kind: ew.hooks.narrow }),
-        !isBack && fields.named(shown, asksUnder ? "Under it (usually " + facts.adhesion.join(", ") + ")" : "Directly under it", field + "/on", under, { placeholder: "a film, or nothing" }),
-        fields.choice(shown, "Surface", field + "/surface", [["", "may roughen"], ["critical", "must stay smooth"]], ew.hooks.narrow)));
+        fields.text(shown, "May lose", field + "/allowed_loss", { kind: ew.hooks.wide }),
+        !isBack && fields.named(shown, asksUnder ? "Under it (usually " + facts.adhesion.join(", ") + ")" : "Directly under it", field + "/on", under, { placeholder: "film or nothing" }),
+        fields.choice(shown, "Surface", field + "/surface", [["", "may roughen"], ["critical", "stays smooth"]], ew.hooks.narrow)));
   }
 
   /** @param {any} shown @param {any} layer @param {number} index */
@@ -56,7 +57,7 @@
     const hooks = ew.hooks;
     const fields = ew.viewFields;
     const field = "layers/" + index;
-    const name = layer.film ? fields.nameOf(shown.entries, layer.film) : "layer " + (index + 1);
+    const name = layer.film ? ew.names.nameOf(shown.entries, layer.film) : "layer " + (index + 1);
     const isTarget = layer.role === "target";
     return el("li", { class: hooks.row + (isTarget ? " " + hooks.rowTarget : "") },
       el("div", { class: hooks.fields },
@@ -73,7 +74,7 @@
     const hooks = ew.hooks;
     const fields = ew.viewFields;
     const field = "also_exposed/" + index;
-    const name = film.film ? fields.nameOf(shown.entries, film.film) : "exposed film " + (index + 1);
+    const name = film.film ? ew.names.nameOf(shown.entries, film.film) : "exposed film " + (index + 1);
     return el("li", { class: hooks.row },
       el("div", { class: hooks.fields },
         fields.named(shown, "Film", field + "/film", shown.entries, { placeholder: "gold, aluminium …", kind: hooks.wide }),
@@ -120,7 +121,7 @@
         fields.labelled("Back side", "back", fields.select(kind, BACKS, setBack), ew.hooks.narrow),
         kind === "film" && fields.named(shown, "Film on the back", "back/film", shown.entries, { kind: ew.hooks.wide }),
         kind === "film" && fields.text(shown, "Thickness", "back/thickness", { kind: ew.hooks.narrow }),
-        kind === "film" && fields.text(shown, "May lose", "back/allowed_loss", { placeholder: "20 nm, or any", kind: ew.hooks.narrow }),
+        kind === "film" && fields.text(shown, "May lose", "back/allowed_loss", { kind: ew.hooks.wide }),
         fields.choice(shown, "Edge of the sample", "edge", EDGES, ew.hooks.narrow)));
   }
 
@@ -151,9 +152,9 @@
     return group("What may be used",
       el("div", { class: hooks.choices, role: "group", "aria-label": "Methods; none chosen means any" }, methods),
       el("div", { class: hooks.fields },
-        fields.text(shown, "Temperature of the etch", "temperature", { placeholder: "80 degC", kind: hooks.narrow }),
+        fields.text(shown, "Temperature of the etch", "temperature", { placeholder: "80 degC, room", kind: hooks.narrow }),
         fields.text(shown, "Hottest the sample may get", "limits/temperature", { placeholder: "120 degC", kind: hooks.narrow }),
-        fields.named(shown, "Carrier", "mount/carrier", shown.entries, { placeholder: "a film, or words" }),
+        fields.named(shown, "Carrier", "mount/carrier", shown.entries, { placeholder: "a film, or words", freeWords: true }),
         fields.text(shown, "Held by", "mount/bond", { placeholder: "thermal wax" })),
       listedLimits(shown));
   }
@@ -196,10 +197,25 @@
       button("Add an etch", () => shown.send({ type: "add", list: "steps", value: { etch: "any" }, focus: ew.viewFields.idOf("steps/" + list.length + "/etch") })));
   }
 
+  /** What an edge of the sample is said to be. @param {string} edge */
+  function edgeWords(edge) {
+    return (EDGES.find((one) => one[0] === edge) || EDGES[0])[1];
+  }
+
+  /** Where nothing is typed, what counts instead stands in the field; it changes with the thickness. @param {any} shown */
+  function showDefaults(shown) {
+    ew.mayLose.byField(shown.data.facts, shown.state.file).forEach(function (/** @type {string} */ words, /** @type {string} */ field) {
+      const input = document.getElementById(ew.viewFields.idOf(field + "/allowed_loss"));
+      if (input instanceof HTMLInputElement) input.placeholder = words || "20 nm, or any";
+      const beside = document.getElementById(ew.viewFields.idOf(field + "/default"));
+      if (beside) beside.textContent = words && input instanceof HTMLInputElement && !input.value ? " · " + (words.startsWith("no default") ? words : "may lose " + words) : "";
+    });
+  }
+
   /** The whole form. @param {any} shown */
   function form(shown) {
     return [...layers(shown), around(shown), goal(shown), limits(shown), steps(shown)];
   }
 
-  ew.viewStack = Object.freeze({ form, button });
+  ew.viewStack = Object.freeze({ form, button, edgeWords, showDefaults });
 })((globalThis.etchwright = globalThis.etchwright || {}));

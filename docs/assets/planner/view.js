@@ -10,16 +10,6 @@
     return document.querySelector("[" + ew.hooks.part + '="' + name + '"]');
   }
 
-  /** Names for the typeahead. @param {Facts} facts */
-  function entriesOf(facts) {
-    const removes = new Map();
-    for (const etch of Object.values(facts.etches)) for (const film of etch.targets) removes.set(film, (removes.get(film) || 0) + 1);
-    const films = Object.values(facts.films)
-      .map((film) => ({ id: film.id, name: film.name, also: [...film.names, film.formula].filter((name) => name && name !== film.name), kind: "film", recipes: removes.get(film.id) || 0 }));
-    const etchants = Object.values(facts.etchants).map((one) => ({ id: one.id, name: one.name, also: [], kind: "etchant", recipes: 1 }));
-    return { films: films, etchants: etchants };
-  }
-
   /** The sample as it is being built, in section. @param {any} shown */
   function drawing(shown) {
     const facts = shown.data.facts;
@@ -61,7 +51,7 @@
 
   /** The page of some data; returns what shows a state. @param {PlannerData} data @param {(action: any) => void} send */
   function page(data, send) {
-    const entries = entriesOf(data.facts);
+    const entries = ew.names.entriesOf(data.facts);
     let revision = -1;
     let timer = 0;
     return function show(/** @type {any} */ state, /** @type {string} */ focus) {
@@ -71,6 +61,7 @@
         ew.viewBar.sync(shown);
         revision = state.revision;
       }
+      ew.viewStack.showDefaults(shown);
       ew.viewFields.showProblems(part("form"), shown.problems);
       ew.dom.fill(part("drawing"), ...drawing(shown));
       ew.dom.fill(part("answers"), ...ew.viewAnswers.answers(shown).flat());
