@@ -7,7 +7,9 @@ import hashlib
 import shutil
 from pathlib import Path
 
+from builder import pipeline
 from builder.mkdocs_plugin import build_site
+from builder.pages.page import FinishedSite
 from builder.problems import Problem, has_errors
 
 _ROOT = Path(__file__).resolve().parents[1]
@@ -49,9 +51,12 @@ def test_two_builds_are_alike_and_a_broken_record_changes_nothing(tmp_path: Path
 
 
 def test_a_dead_link_stops_the_exchange(tmp_path: Path) -> None:
-    """A hand-written page that links nowhere keeps the old site in its place."""
+    """A page that links nowhere keeps the old site in its place."""
     lab, out = _copied_lab(tmp_path), tmp_path / "out"
-    (lab / "docs" / "start.md").write_text('# Start\n\n<a href="gone.html">x</a>\n', encoding="utf-8")
-    problems = _errors(build_site(lab, out, _DAY))
+
+    def host(site: FinishedSite, lab_dir: Path, folder: Path) -> None:
+        (folder / "start.html").write_text('<h1>Start</h1><a href="gone.html">x</a>', encoding="utf-8")
+
+    problems = _errors(pipeline.build_site(lab, out, _DAY, lambda _: None, host))
     assert [problem.rule for problem in problems] == ["dead-link"]
     assert not out.exists()

@@ -501,7 +501,7 @@ def test_what_is_wrong_stays_in_view_and_moves_no_box(open_page: Open, http_root
 def test_a_phone_leads_from_the_line_to_the_answers(open_page: Open, http_root: str) -> None:
     """The line at the bottom has a way to the answers; each film's reason is read without a sideways step."""
     page = open_page(http_root + _URL + _link(_STACK), viewport=_PHONE).page
-    page.get_by_role("button", name="See the answers").click()
+    page.get_by_role("button", name="Answers", exact=True).click()
     expect(page.locator("#plan-answers-title")).to_be_in_viewport()
     expect(page.locator("#plan-answers-title")).to_be_focused()
     page.locator(".plan-head").first.click()

@@ -18,9 +18,15 @@ from tests.site.page_kinds import PAGES
 _RULES = {"type": "tag", "values": ["wcag2a", "wcag2aa", "wcag21a", "wcag21aa", "wcag22aa"]}
 # The two schemes differ in nothing but colours.
 _COLOURS = {"type": "rule", "values": ["color-contrast"]}
-# Rows, columns and entries of one list come from one template: the first dozen tell what all would.
+# Rows, columns and entries of one list come from one template: the first half dozen tell what all would.
 _SHORTEN = """document.querySelectorAll('article :is(tbody, tr, ul, ol, dl, .ew-pairs-evidence)')
-  .forEach((list) => [...list.children].slice(12).forEach((one) => one.remove()))"""
+  .forEach((list) => [...list.children].slice(6).forEach((one) => one.remove()))"""
+# All colours come from a dozen variables, whose contrast a test of the style sheet computes for both schemes:
+# pages that use each of them in its place.
+_IN_THE_DARK = (
+    "home", "recipe list", "recipe, many runs", "film", "etchant", "matrix of losses", "planner", "safety",
+    "matrix of chemicals", "bench sheet", "glossary", "method note",
+)  # fmt: skip
 _HEADING = re.compile(r"<h([1-6])[ >]")
 
 
@@ -36,12 +42,19 @@ def _violations(page: Page, rules: dict[str, Any], least_passes: int) -> list[tu
 
 @pytest.mark.parametrize("kind", PAGES)
 def test_axe_finds_nothing(open_page: Open, http_root: str, kind: str) -> None:
-    """No violation of WCAG 2.2 AA that a program can find; in the dark, of its rule on colours."""
-    for scheme, body, rules, least in (("light", "default", _RULES, 10), ("dark", "slate", _COLOURS, 1)):
-        page = open_page(http_root + PAGES[kind], color_scheme=scheme).page
-        expect(page.locator("body")).to_have_attribute("data-md-color-scheme", body)
-        page.evaluate(_SHORTEN)
-        assert _violations(page, rules, least) == [], scheme
+    """No violation of WCAG 2.2 AA that a program can find."""
+    page = open_page(http_root + PAGES[kind], color_scheme="light").page
+    page.evaluate(_SHORTEN)
+    assert _violations(page, _RULES, 10) == []
+
+
+@pytest.mark.parametrize("kind", _IN_THE_DARK)
+def test_axe_finds_nothing_in_the_dark(open_page: Open, http_root: str, kind: str) -> None:
+    """Nothing but colours differs there, so the rule on colours is the one to try."""
+    page = open_page(http_root + PAGES[kind], color_scheme="dark").page
+    expect(page.locator("body")).to_have_attribute("data-md-color-scheme", "slate")
+    page.evaluate(_SHORTEN)
+    assert _violations(page, _COLOURS, 1) == []
 
 
 @pytest.mark.parametrize("scheme", ["light", "dark"])

@@ -11,7 +11,7 @@ from tests.browser import Open
 from tests.site.page_kinds import PAGES
 
 # Long enough for whatever a page starts after it has loaded.
-_LATE_MS = 300
+_LATE_MS = 200
 _INSIDE = ("data:", "blob:", "about:")
 
 

@@ -13,9 +13,9 @@ _ROWS_UNSEEN = """() => [...document.querySelectorAll('article tbody > tr')]
 
 
 @pytest.mark.parametrize("kind", PAGES)
-def test_a_page_reads_without_script(open_page: Open, any_root: str, kind: str) -> None:
+def test_a_page_reads_without_script(open_page: Open, file_root: str, kind: str) -> None:
     """Title, every row of every table, and the way to other pages are there; dead controls are not."""
-    page = open_page(any_root + PAGES[kind], java_script_enabled=False).page
+    page = open_page(file_root + PAGES[kind], java_script_enabled=False).page
     assert page.locator("article h1").count() == 1
     assert len(page.locator("article").inner_text()) > 200
     assert page.evaluate(_ROWS_UNSEEN) == 0

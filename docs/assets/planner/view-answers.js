@@ -83,7 +83,7 @@
     return el("div", { class: ew.hooks.best, id: "plan-best" },
       planned && shown.plan.stages.length > 0 && verdict(ew.planning.verdictOf(shown.plan)),
       el("span", { class: ew.hooks.bestLine }, bestWords(shown, false)),
-      ew.viewStack.button(planned ? "See the answers" : "See what is missing", toAnswers, { id: "plan-best-jump", class: ew.hooks.button + " " + ew.hooks.jump }));
+      ew.viewStack.button(planned ? "Answers" : "What is missing", toAnswers, { id: "plan-best-jump", class: ew.hooks.button + " " + ew.hooks.jump }));
   }
 
   /** On a phone the answers stand far below the form. */
