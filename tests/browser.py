@@ -36,7 +36,7 @@ _TIMEOUT_MS = 15_000
 
 @dataclass
 class Visit:
-    """A page opened in a context of its own; `requests` and `faults` fill as things happen."""
+    """A window with its page; `requests` and `faults` fill as things happen to it."""
 
     page: Page
     requests: list[str] = field(default_factory=list)
@@ -151,6 +151,9 @@ def _clear(visit: Visit, options: dict[str, Any]) -> None:
     """Leave nothing of the last test in a window: neither its page nor what it set or chose."""
     page = visit.page
     page.unroute_all()
+    page.context.clear_cookies()
+    if page.url.startswith("http"):
+        page.evaluate("() => { localStorage.clear(); sessionStorage.clear(); }")
     page.goto("about:blank")
     page.set_viewport_size(options.get("viewport", DESKTOP))
     page.emulate_media(

@@ -29,8 +29,10 @@ class FilmNames:
         # A film called so goes before one that only has the formula, and a film before a family.
         ordered = sorted(films, key=lambda film: (film.is_family, film.id))
         called = [(film.id, name) for film in ordered for name in (film.id, film.name, *film.synonyms)]
+        # Who calls a film by the name of its family means one of the members.
+        meant = [(id, name) for film in ordered for name in film.synonyms for id in film.members]
         made_of = [(film.id, film.formula) for film in ordered if film.formula]
-        return cls.of_pairs([*called, *made_of])
+        return cls.of_pairs([*called, *meant, *made_of])
 
     @classmethod
     def of_pairs(cls, pairs: Iterable[tuple[str, str]]) -> FilmNames:

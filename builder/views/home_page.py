@@ -139,13 +139,11 @@ def _named_film(records: LabRecords, computed: Computed, film: Film) -> NamedPag
 
 
 def _removed_by(records: LabRecords, computed: Computed, film: str) -> Iterator[HomeRecipe]:
-    seen = set()
     for row in recipes_for(records, computed, film):
-        if row.etch.target in seen or row.is_retired:
-            continue
-        seen.add(row.etch.target)
-        words = (f"{row.times} for {row.depth}", row.rank, row.member, row.remark)
-        yield HomeRecipe(row.etch.text, row.etch.target, ", ".join(filter(None, words)))
+        if not row.is_retired:
+            of = f" of {row.member}" if row.member else ""
+            words = (f"{row.times} for {row.depth}{of}", row.rank, row.remark)
+            yield HomeRecipe(row.etch.text, row.etch.target, ", ".join(filter(None, words)))
 
 
 def _is_stale(row: RecipeRow, oldest: float) -> bool:

@@ -55,7 +55,6 @@ COLUMN_WORDS = {
 }
 """What a column holds whose name does not say it, in the schema's words; a test holds them to it."""
 _BY_PLAN = "by plan"
-_AT_THE_BENCH = ("Protective equipment", "Controls", "Besides")
 
 
 @dataclass(frozen=True)
@@ -153,9 +152,7 @@ def _after(step: AfterRow) -> CardStep:
 def _hazard(block: PrecautionBlock) -> CardHazard:
     return CardHazard(
         name=block.name,
-        wear=tuple(
-            (fact.term, fact.text) for fact in (*block.wear, *block.facts) if fact.term in _AT_THE_BENCH
-        ),
+        wear=tuple((fact.term, fact.text) for fact in block.at_the_bench),
         first=tuple((fact.term, fact.text) for fact in block.first),
     )
 

@@ -48,11 +48,11 @@ class HazardStatement:
 
 @dataclass(frozen=True)
 class PrecautionBlock:
-    """Equipment and first action of one class, and how that is known."""
+    """What to do first, what must be at the bench, and the rest of one class, and how that is known."""
 
     name: str
     first: tuple[Fact, ...]
-    wear: tuple[Fact, ...]
+    at_the_bench: tuple[Fact, ...]
     facts: tuple[Fact, ...]
     overrides: str
     trust: str
@@ -160,12 +160,14 @@ def precaution_block(records: LabRecords, precaution: Precaution) -> PrecautionB
             ("In the eye", precaution.first_action_eye),
             ("Breathed in", precaution.first_action_inhalation),
         ),
-        wear=known_facts(("Protective equipment", precaution.ppe)),
-        facts=known_facts(
+        at_the_bench=known_facts(
+            ("Protective equipment", precaution.ppe),
             ("Controls", precaution.controls),
+            ("Besides", precaution.extra),
+        ),
+        facts=known_facts(
             ("Alarms and checks", precaution.monitoring),
             ("Storage and waste", precaution.storage_and_waste),
-            ("Besides", precaution.extra),
         ),
         overrides=precaution.defer_to,
         trust=_trust_words(precaution),

@@ -403,7 +403,7 @@ def test_the_card_tells_which_sample_and_what_its_own_numbers_mean(open_page: Op
     for words in (
         "Positive resist A (novolak type), 1.4 µm, mask, may lose 1.3 µm (lab's default)",
         "Silicon nitride, LPCVD, stoichiometric, 150 nm, stays, may lose 10 nm\n",
-        "Silicon, single crystal (100), 525 µm, stays, not reached",
+        "Silicon, single crystal (100), 525 µm, stays, reached from the back, may lose 5.0 nm",
         "Back: Silicon dioxide, thermal, wet grown, 300 nm, may vanish. Edge: protected. Each edge moves ",
         "Etch, 3 min 20 s:",
         "Under your target lies Silicon nitride, LPCVD, stoichiometric: expect its look",
@@ -511,12 +511,15 @@ def test_a_phone_leads_from_the_line_to_the_answers(open_page: Open, http_root: 
     assert reason is not None and reason["x"] + reason["width"] <= _PHONE["width"]
 
 
-def test_a_typed_name_that_fits_one_film_is_taken(open_page: Open, http_root: str) -> None:
-    """Words in any order name the film when they fit only one, and the field shows which."""
+def test_words_that_are_no_name_are_asked_about(open_page: Open, http_root: str) -> None:
+    """Words in any order suggest the film; left unchosen they name nothing, and the likeliest are offered."""
     page = open_page(http_root + _URL + _link(_STACK)).page
     field = page.locator("#plan-layers-2-film")
     field.fill("stoichiometric LPCVD nitride silicon")
     page.keyboard.press("Escape")
     page.keyboard.press("Tab")
+    expect(page.locator("#plan-layers-2-film-fault")).to_contain_text("did you mean Silicon nitride, LPCVD")
+    field.fill("stoichiometric LPCVD nitride  silicon")
+    page.keyboard.press("Enter")
     expect(field).to_have_value("Silicon nitride, LPCVD, stoichiometric")
     expect(_best(page)).to_contain_text("holds")

@@ -47,6 +47,11 @@ def kind_of(url: str) -> str:
     return path.as_posix() if folder == "." else f"{folder}/{'list' if path.stem == 'index' else 'record'}"
 
 
+def recipe_pages(folder: Path) -> list[Path]:
+    """Return the page of every recipe of a built site."""
+    return [path for path in sorted((folder / "recipes").glob("*.html")) if path.name != "index.html"]
+
+
 def kinds_of_site(folder: Path) -> set[str]:
     """Return the kinds of all pages of a built site."""
     return {kind_of(path.relative_to(folder).as_posix()) for path in folder.rglob("*.html")}

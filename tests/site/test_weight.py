@@ -7,6 +7,7 @@ from pathlib import Path
 from urllib.parse import urlsplit
 
 from tests.browser import Open
+from tests.site.page_kinds import recipe_pages
 
 _MOST_PACKED = 130_000
 _MOST_RAW = 420_000
@@ -18,7 +19,7 @@ def _packed(content: bytes) -> int:
 
 def test_every_recipe_page_is_light(open_page: Open, http_root: str, shipped_site: Path) -> None:
     """All that a first visit loads, without the search's index, stays within its budget on every page."""
-    pages = {path: path.read_bytes() for path in (shipped_site / "recipes").glob("[!i]*.html")}
+    pages = {path: path.read_bytes() for path in recipe_pages(shipped_site)}
     assert len(pages) > 30
     # One page's company is every page's: what else they load differs in nothing.
     longest = max(pages, key=lambda path: len(pages[path]))

@@ -118,6 +118,7 @@ def _pairs(films: Iterable[FilmFacts]) -> list[tuple[str, str]]:
     ordered = sorted(films, key=lambda film: (film.is_family, film.id))
     return [
         *((film.id, name) for film in ordered for name in (film.id, *film.names)),
+        *((id, name) for film in ordered for name in film.names[1:] for id in film.members),
         *((film.id, film.formula) for film in ordered if film.formula),
     ]
 

@@ -67,7 +67,8 @@
 
     function show() {
       const found = answer(data.targets[film ? Number(film.value) : 0], value.value, Number(unit.value));
-      found.for = value.value.trim() + NO_BREAK + unit.selectedOptions[0].text;
+      found.for = value.value.trim() + NO_BREAK + unit.selectedOptions[0].text
+        + (film ? " of " + film.selectedOptions[0].text : "");
       shown.textContent = found.words;
       large.forEach(function (one) { one.place.textContent = found.first ? found[one.name] : one.usual; });
     }

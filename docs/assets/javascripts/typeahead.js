@@ -44,9 +44,9 @@
     return { entry: entry, scattered: whole ? 1 : 2, at: Math.max(at, 0), by: by === entry.name || by === entry.id ? "" : by, exact: false };
   }
 
-  /** Entries that have the typed text in a name, or failing that each of its words in some name. The
-   * whole text comes before scattered words; then what a recipe removes, then the very name, then
-   * names that start with it, then what most recipes remove. */
+  /** Entries that have the typed text in a name, or failing that each of its words in some name. What
+   * is called so comes first, then the whole text before scattered words, then what a recipe removes,
+   * then names that start with it, then what most recipes remove. */
   function matches(entries, kind, typed) {
     const sought = plain(typed);
     if (!sought) return [];
@@ -57,9 +57,9 @@
       .filter(Boolean);
     found.sort(
       (a, b) =>
+        Number(b.exact) - Number(a.exact) ||
         a.scattered - b.scattered ||
         Number(!a.entry.recipes) - Number(!b.entry.recipes) ||
-        Number(b.exact) - Number(a.exact) ||
         a.at - b.at ||
         b.entry.recipes - a.entry.recipes ||
         a.entry.name.localeCompare(b.entry.name),

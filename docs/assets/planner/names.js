@@ -15,15 +15,14 @@
     return { films: films, etchants: etchants };
   }
 
-  /** The id of the only one that is called exactly so, or of the only entry that has every typed word; else the text as typed. @param {Entry[]} entries @param {string} typed @param {boolean} byWords */
-  function idOf(entries, typed, byWords) {
+  /** The id of the only one that is called exactly so, else the text as typed: a part of a name may be of a film that nobody means. @param {Entry[]} entries @param {string} typed */
+  function idOf(entries, typed) {
     const sought = typed.trim().toLowerCase();
     const entry = entries.find((one) => one.id === sought || one.name.toLowerCase() === sought);
     if (entry) return entry.id;
     // A formula is no name: many films are SiO2, and the first of them is not the one that is meant.
     const called = entries.filter((one) => (one.names || one.also).some((name) => name.toLowerCase() === sought));
-    const found = called.length || !byWords ? called : ew.find.matches(entries, null, typed).map((/** @type {any} */ match) => match.entry);
-    return found.length === 1 ? found[0].id : typed.trim();
+    return called.length === 1 ? called[0].id : typed.trim();
   }
 
   /** @param {Entry[]} entries @param {string} id */

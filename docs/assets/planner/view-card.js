@@ -62,10 +62,12 @@
   /** @param {any} card @param {Option} option */
   function steps(card, option) {
     const { el } = ew.dom;
+    // The planned time is that of one step; which of several it is divided over, nobody has said.
+    const isOne = (card.steps || []).filter((/** @type {any} */ step) => step.by_plan).length === 1;
     const line = (/** @type {any} */ step, /** @type {string} */ middle) => el("li", {}, el("strong", {}, step.name), middle ? ", " + middle : "", step.settings ? ": " + step.settings : "", step.note ? ". " + step.note : "");
     return block("Steps",
       el("ol", {}, (card.before || []).map((/** @type {string} */ one) => el("li", {}, "Before: " + one)),
-        (card.steps || []).map((/** @type {any} */ step) => line(step, step.by_plan ? planned(option) : step.time)),
+        (card.steps || []).map((/** @type {any} */ step) => line(step, step.by_plan && isOne ? planned(option) : step.time)),
         (card.after || []).map((/** @type {any} */ step) => line(step, step.time))));
   }
 
@@ -119,7 +121,13 @@
   function goes(shown, option, film, role) {
     if (role === "target") return "";
     const thickness = ew.sample.thicknessNm(shown.data.facts, film);
-    const row = option.rows.find((one) => one.film === film.film && one.role === role && one.thicknessNm === thickness);
+    const isIt = (/** @type {FilmRow} */ one) => one.film === film.film && one.thicknessNm === thickness;
+    const row = option.rows.find((one) => isIt(one) && one.role === role);
+    if (!row && role === "under") {
+      // The lowest layer may be reached from its back, once what lies there is gone.
+      const back = option.rows.find((one) => isIt(one) && one.role === "back");
+      if (back) return ", reached from the back, " + ew.viewOption.allowedWords(back);
+    }
     if (!row) return ", not reached";
     return ", " + ew.viewOption.allowedWords(row) + (film.allowed_loss === undefined && row.allowedNm !== null ? " (lab's default)" : "");
   }

@@ -72,7 +72,7 @@
       // Once typing is over, the field shows which film was understood.
       onchange: () => (input.value = ew.names.nameOf(entries, idTyped())),
     });
-    const idTyped = () => ew.names.idOf(entries, input.value, !(more && more.freeWords));
+    const idTyped = () => ew.names.idOf(entries, input.value);
     const whole = labelled(label, field, input, more && more.kind);
     ew.find.combobox(input, entries, function (/** @type {any} */ entry) {
       input.value = entry.name;
