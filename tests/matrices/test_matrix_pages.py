@@ -208,7 +208,13 @@ def test_on_paper_many_columns_fit_a_sheet_as_marks(open_page: Open, http_root: 
     assert page.locator("table[data-ew-matrix] thead th[data-kind]").count() > 30
     assert table.evaluate("(e) => e.getBoundingClientRect().width") <= 718
     assert cell.evaluate("(e) => getComputedStyle(e).fontSize") == "0px"
+    told = page.locator("[data-ew-still]")
+    expect(told).to_be_visible()
+    expect(told).to_have_text("Shown for 10\xa0min.")
     page.emulate_media(media="screen")
+    expect(told).to_be_hidden()
+    page.locator("[data-ew-time]").select_option("3")
+    expect(told).not_to_have_text("Shown for 10\xa0min.")
     page.locator("[data-ew-narrow='method']").select_option("vapour")
     page.emulate_media(media="print")
     assert cell.evaluate("(e) => parseFloat(getComputedStyle(e).fontSize)") > 4

@@ -70,15 +70,14 @@ SHIPPED_DEFAULTS = frozenset({"lab"})
 def test_every_field_is_in_both(name: str) -> None:
     """A field that only the schema knows would be read and lost."""
     cls, schema = CASES[name]
-    compare_fields(
-        cls, schema, name in SHIPPED_DEFAULTS, NOT_IN_FILE | ({"etchant"} if name in LISTED else set())
-    )
+    outside = NOT_IN_FILE | ({"etchant"} if name in LISTED else set())
+    assert compare_fields(cls, schema, name in SHIPPED_DEFAULTS, outside) == len(schema["properties"]) > 0
 
 
 def compare_fields(
     cls: type[Any], schema: Mapping[str, Any], may_lack: bool, outside: set[str] | frozenset[str]
-) -> None:
-    """Compare names, obligations, words, and the objects within."""
+) -> int:
+    """Compare names, obligations, words, and the objects within; return how many fields were compared."""
     keys = field_keys(cls)
     fields = {keys[field.name]: field for field in dataclasses.fields(cls) if field.name not in outside}
     assert set(fields) == set(schema["properties"]), cls
@@ -90,9 +89,12 @@ def compare_fields(
     asked = set(schema.get("required", []))
     assert may_lack or required <= asked, cls
     hints = typing.get_type_hints(cls, include_extras=True)
+    compared = 0
     for attribute, key in keys.items():
         if attribute not in outside:
             compare_types(hints[attribute], schema["properties"][key], may_lack)
+            compared += 1
+    return compared
 
 
 def compare_types(hint: Any, schema: Mapping[str, Any], may_lack: bool) -> None:

@@ -180,6 +180,7 @@
           cell.textContent = found.short;
         });
       });
+      still.textContent = "Shown for " + timeChoice.selectedOptions[0].text + ".";
       if (current) open(current);
     }
 
@@ -268,7 +269,8 @@
     form.addEventListener("input", narrow);
     form.addEventListener("reset", () => setTimeout(function () { narrow(); if (timeChoice) retime(); }, 0));
     if (timeChoice) timeChoice.addEventListener("change", retime);
-    if (still) still.hidden = true;
+    // On the screen the choice itself says for which time the cells are; on paper this line does.
+    if (still) still.classList.add("ew-paper-only");
     form.hidden = false;
     panel.hidden = false;
     narrow();
