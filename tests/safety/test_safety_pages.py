@@ -237,3 +237,16 @@ def test_what_must_never_meet_it_stands_first(shipped_site: Path, page: str) -> 
     for row in rows:
         head = re.sub(r"<[^>]*>", "", row.partition("</th>")[0])
         assert head.partition(":")[0].casefold() in first.casefold(), head
+
+
+def test_no_page_of_a_substance_begins_with_a_blank(shipped_site: Path) -> None:
+    """Where no forbidden pair is on record the page says so, and that it is no permission."""
+    pages = [*(shipped_site / "chemicals").glob("*.html"), *(shipped_site / "etchants").glob("*.html")]
+    said = {True: 0, False: 0}
+    for path in pages:
+        if path.name == "index.html":
+            continue
+        head = path.read_text(encoding="utf-8").partition('class="ew-caution"')[0]
+        assert ("Must never meet:" in head) != ("No forbidden pair is on record." in head), path
+        said["Must never meet:" in head] += 1
+    assert min(said.values()) > 5
